@@ -1,0 +1,7 @@
+//! Keeplit designs, prices and keeps the jobs of people who fit backup power.
+//!
+//! In reading order: units, the engine, the records, their text, the store, the pages, the command
+//! line. `DEVELOPERS.md` holds the map.
+
+pub mod sizing;
+pub mod units;

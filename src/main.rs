@@ -1,0 +1,3 @@
+//! The command line: arguments in, exit code out.
+
+fn main() {}

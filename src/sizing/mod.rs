@@ -1,0 +1,18 @@
+//! The engine: pure functions from a survey to a design.
+//!
+//! Survey → demand → inverter → bank → cables → starts → charger → ventilation, life. Each stage
+//! sees the ones before it and the assumptions, writes its figures on the sheet and never looks
+//! ahead. It always answers; what is unsafe or doubtful comes back as findings.
+
+pub mod assumptions;
+pub mod design;
+pub mod finding;
+pub mod sheet;
+pub mod survey;
+pub mod tables;
+
+pub use assumptions::Assumptions;
+pub use design::Design;
+pub use finding::{Finding, Severity};
+pub use sheet::Sheet;
+pub use survey::Survey;
