@@ -128,9 +128,12 @@ mod tests {
         for (name, text) in messages() {
             let lower = text.to_lowercase();
             for word in banned {
-                assert!(!lower.split(|c: char| !c.is_alphabetic() && c != ' ').any(|part| {
-                    part == word || part.split(' ').any(|single| single == word)
-                }), "{name} says {word:?}");
+                assert!(
+                    !lower
+                        .split(|c: char| !c.is_alphabetic() && c != ' ')
+                        .any(|part| { part == word || part.split(' ').any(|single| single == word) }),
+                    "{name} says {word:?}"
+                );
             }
             let speaks_of_charge = text.split(|c: char| !c.is_alphabetic()).any(|word| word == "Ah" || word == "VA");
             assert!(!speaks_of_charge || name.starts_with("kit-"), "{name}: units of the trade outside the parts list");

@@ -35,6 +35,7 @@ promise-told = When the mains goes off, everything on the list below keeps runni
 promise-start = We counted from { $time }, when the most is switched on.
 promise-start-asked = We counted from { $time }, as you asked.
 promise-worst = This holds on the coldest day, with a battery near the end of its life.
+promise-none = No promise of hours
 promise-more = A new battery, or fewer things switched on, lasts longer.
 
 ## What stays on
@@ -183,25 +184,24 @@ slow = Too many wrong links were opened from here. Wait some minutes, then open 
 
 ## Parts list, as it is first filled in
 
-kit-inverter = Inverter and charger, { $va } VA, { $bus } V, { $wave }, charging at { $amps } A
+kit-inverter = Inverter with charger, { $rating }, { $bus }, { $wave }, charges at { $current }
 kit-sine = pure sine
 kit-square = square wave
-kit-battery = { $kind }, 12 V, { $ah } Ah at the { $rate } h rate
+kit-battery = { $kind }, 12{"\u00A0"}V, { $capacity } at the { $rate } rate
 kit-flooded-tubular = Tubular lead-acid battery
 kit-flooded-flat = Flat-plate lead-acid battery
 kit-agm = Sealed lead-acid battery (AGM)
 kit-gel = Sealed lead-acid battery (gel)
 kit-lfp = Lithium iron phosphate battery
-kit-cable = { $metal } cable, { $size }, { $run }, in metres
+kit-links = Set of battery links and lugs
+kit-cable-battery = { $metal } single-core cable { $size }, { $run }, per metre
+kit-cable-supply = { $metal } cable, line and neutral { $size }, earth { $earth }, { $run }, per metre
 kit-copper = Copper
 kit-aluminium = Aluminium
-kit-cable-earth = Earth conductor, { $size }, { $run }, in metres
-kit-device = { $device } { $amps } A, { $run }
-kit-device-breaking = { $device } { $amps } A, breaks { $ka } kA, { $run }
-kit-lug = Lugs and link cables for the battery
+kit-device = { $device } { $rating }, breaking { $breaks }, { $run }
 kit-run-bank-to-inverter = battery to inverter
-kit-run-string-lead = battery string lead
+kit-run-string-lead = battery string leads
 kit-run-inverter-to-board = inverter to board
 kit-run-mains-to-inverter = mains to inverter
 kit-run-charger-to-bank = charger to battery
-kit-labels = Warning labels for two sources of power
+kit-labels = Set of warning labels for two sources of power
