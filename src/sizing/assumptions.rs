@@ -173,6 +173,9 @@ assumptions! {
     /// Share of the bank that a cut may take.
     depth_of_discharge_max = |c: &Properties| c.depth_of_discharge_max, "Depth of discharge allowed", "", 0.05..=1.0,
         "makers' user manuals; about half for daily lead-acid, 0.8 for lithium iron phosphate", Read;
+    /// Peukert's exponent where the data sheet gives fewer than two ratings.
+    peukert_exponent = |c: &Properties| c.peukert, "Peukert's exponent where the data sheet gives fewer than two ratings", "", 1.0..=1.6,
+        "battery monitor's manual and makers' data sheets, by kind; tubular and lithium from memory", Read;
     /// Bank size for its last year over the size for its first.
     ageing_factor = |_: &Properties| 1.25, "Ageing factor", "", 1.0..=2.0,
         "IEEE 485: 1/0.8, end of life at 80 % of rated capacity", FromMemory;
@@ -194,6 +197,21 @@ assumptions! {
     /// Battery charge put back over charge taken.
     charge_factor = |c: &Properties| c.charge_factor, "Charge put back over charge taken", "", 1.0..=1.5,
         "makers' charging notes: 1.02 to 1.20 by kind", CommonPractice;
+    /// Least charging current over the 20 h capacity.
+    charge_current_least_a_per_ah = |c: &Properties| c.charge_current.least, "Least charging current over the 20 h capacity", "A/Ah", 0.01..=1.0,
+        "makers' manuals: 0.05 to 0.10 by kind", Read;
+    /// Most charging current over the 20 h capacity.
+    charge_current_most_a_per_ah = |c: &Properties| c.charge_current.most, "Most charging current over the 20 h capacity", "A/Ah", 0.05..=2.0,
+        "makers' manuals and data sheets: 0.2 to 0.5 by kind", Read;
+    /// Absorption volts per cell at 25 °C.
+    absorption_v_per_cell = |c: &Properties| c.set_volts.absorption.0, "Absorption volts per cell at 25 °C", "V", 2.2..=3.7,
+        "makers' data sheets and manuals, by kind", Read;
+    /// Float volts per cell at 25 °C.
+    float_v_per_cell = |c: &Properties| c.set_volts.float.0, "Float volts per cell at 25 °C", "V", 2.1..=3.6,
+        "makers' data sheets and manuals, by kind", Read;
+    /// Change of the set volts per kelvin and cell.
+    compensation_mv_per_k = |c: &Properties| c.set_volts.compensation_mv_per_k, "Change of the set volts per kelvin and cell", "mV/K", -8.0..=0.0,
+        "makers' manuals: -3 to -5 for lead-acid; none for lithium", Read;
     /// Efficiency of the charger.
     charger_efficiency = |_: &Properties| 0.85, "Efficiency of the charger", "", 0.5..=1.0,
         "chargers built into home units", CommonPractice;
@@ -224,6 +242,9 @@ assumptions! {
     /// Short-circuit current at the mains terminals.
     supply_fault_current_ka = |_: &Properties| 6.0, "Prospective fault current of the mains", "kA", 0.5..=50.0,
         "usual breaking capacity of house breakers; ask the distributor", CommonPractice;
+    /// Years on float at 25 °C.
+    calendar_life_years = |c: &Properties| c.calendar_life.0, "Life on float at 25 °C", "years", 1.0..=30.0,
+        "glass mat: maker's data sheet, 6 to 8 years; the other kinds from memory", FromMemory;
     /// Life lost by heat: kelvin that halve it.
     life_halving_k = |c: &Properties| c.life_halving_step.0, "Heat that halves a battery's calendar life", "K", 5.0..=30.0,
         "a maker's support article: half the life per 10 K above 25 °C", Read;
