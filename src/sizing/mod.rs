@@ -5,6 +5,7 @@
 //! ahead. It always answers; what is unsafe or doubtful comes back as findings.
 
 pub mod assumptions;
+pub mod battery_bank;
 pub mod design;
 pub mod finding;
 pub mod sheet;

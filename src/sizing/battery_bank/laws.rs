@@ -1,0 +1,237 @@
+//! What must hold for every bank.
+
+use proptest::prelude::*;
+
+use super::example::{bank, bank_with, shop};
+use super::{bank_for, example};
+use crate::sizing::Assumptions;
+use crate::sizing::Sheet;
+use crate::sizing::design::{Bank, RulingMethod};
+use crate::sizing::finding::Finding;
+use crate::sizing::survey::{BatteryRating, BusVolts, Chemistry};
+use crate::units::{AmpHours, Celsius, Hours, Watts};
+
+fn rating(hours: f64, capacity: f64) -> BatteryRating {
+    BatteryRating { hours: Hours(hours), capacity: AmpHours(capacity) }
+}
+
+#[test]
+fn a_steady_load_on_a_simple_unit_gets_the_bank_worked_by_hand() {
+    // 400 W for 4 h through a unit without losses at 10.5 V: 38.095 A, 152.38 Ah. Glass mat, typical exponent 1.12:
+    // t(38.095 A) = 4 h wants C_20 = 38.095 · 20 · (4/20)^(1/1.12) = 181.059 Ah; half of it may be used, 25 °C, no margin.
+    let mut survey = shop(Chemistry::VrlaAgm);
+    survey.site.battery_coldest = Celsius(25.0);
+    survey.choice.bus = Some(BusVolts::V12);
+    let mut factors = Assumptions::defaults(Chemistry::VrlaAgm);
+    factors.set("bank_margin", 1.0).unwrap();
+    let mut unit = example::inverter(Watts(400.0));
+    unit.losses.no_load = Watts(0.0);
+    unit.losses.quadratic = 0.0;
+    let mut sheet = Sheet::default();
+    let bank = bank_for(&[vec![(Watts(400.0), Hours(4.0))]], &survey, &unit, &factors, &mut sheet);
+    assert!((bank.outage.0 - 152.381).abs() < 0.001, "{bank:?}");
+    assert!((bank.methods.peukert.0 - 362.118).abs() < 0.001, "{bank:?}");
+    assert!((bank.methods.section.0 - 226.324).abs() < 0.001, "{bank:?}");
+    assert_eq!((bank.required, bank.ruled_by), (bank.methods.peukert, RulingMethod::Peukert));
+    assert_eq!((bank.block.0, bank.strings, bank.installed.0), (200.0, 2, 400.0));
+    assert_eq!((bank.peukert_exponent, bank.cut_off.0), (1.12, 10.5));
+    assert!(sheet.findings.contains(&Finding::TypicalRatings { peukert: 1.12 }));
+}
+
+#[test]
+fn a_short_hard_cut_is_ruled_by_the_section_method() {
+    let mut factors = Assumptions::defaults(Chemistry::Lfp);
+    factors.set("depth_of_discharge_max", 1.0).unwrap();
+    let (bank, _) = bank_with(&shop(Chemistry::Lfp), &[(900.0, 1.0)], &factors);
+    assert_eq!(bank.ruled_by, RulingMethod::Section);
+    assert_eq!(bank.required, bank.methods.section);
+}
+
+#[test]
+fn a_heavy_load_is_given_higher_bus_volts_and_says_so_when_the_bus_is_forced() {
+    let chemistry = Chemistry::FloodedTubular;
+    for (watts, bus) in [(500.0, BusVolts::V12), (1200.0, BusVolts::V24), (2800.0, BusVolts::V48)] {
+        let mut survey = shop(chemistry);
+        assert_eq!(bank(&survey, &[(watts, 1.0)]).0.bus, bus, "{watts} W");
+        survey.choice.bus = Some(BusVolts::V12);
+        let (forced, sheet) = bank(&survey, &[(watts, 1.0)]);
+        assert_eq!(forced.bus, BusVolts::V12);
+        let told = sheet.findings.iter().any(|finding| matches!(finding, Finding::BusTooLow { .. }));
+        assert_eq!(told, bus != BusVolts::V12, "{watts} W");
+        let stopped = sheet.findings.iter().any(|finding| matches!(finding, Finding::CurrentAboveCable { .. }));
+        assert_eq!(stopped, forced.peak_current.0 > 150.0, "{watts} W");
+    }
+}
+
+#[test]
+fn too_many_strings_raise_the_bus_and_are_a_stop_where_that_does_not_help() {
+    let survey = shop(Chemistry::VrlaAgm);
+    let (raised, sheet) = bank(&survey, &[(600.0, 12.0)]);
+    assert_eq!(raised.bus, BusVolts::V24, "one string at 12 V would not do: {raised:?}");
+    assert!(!sheet.findings.iter().any(|finding| matches!(finding, Finding::TooManyStrings { .. })));
+    let (helpless, sheet) = bank(&survey, &[(4000.0, 20.0)]);
+    assert_eq!(helpless.bus, BusVolts::V48);
+    assert!(sheet.findings.contains(&Finding::TooManyStrings { strings: helpless.strings, most: 4 }));
+    assert!(helpless.installed >= helpless.required);
+}
+
+#[test]
+fn ratings_that_contradict_each_other_are_refused_and_the_typical_ones_used() {
+    let mut survey = shop(Chemistry::VrlaGel);
+    let typical = bank(&survey, &[(300.0, 4.0)]).0;
+    survey.battery_ratings = vec![rating(20.0, 100.0), rating(10.0, 110.0)];
+    let (refused, sheet) = bank(&survey, &[(300.0, 4.0)]);
+    let finding =
+        Finding::RatingsContradict { slow: (Hours(20.0), AmpHours(100.0)), fast: (Hours(10.0), AmpHours(110.0)) };
+    assert!(sheet.findings.contains(&finding), "{:?}", sheet.findings);
+    assert_eq!((refused.peukert_exponent, refused.required), (typical.peukert_exponent, typical.required));
+}
+
+#[test]
+fn colder_than_the_table_takes_the_coldest_row_and_says_so() {
+    let mut survey = shop(Chemistry::FloodedTubular);
+    survey.site.battery_coldest = Celsius(-15.0);
+    let (bank, sheet) = bank(&survey, &[(300.0, 4.0)]);
+    assert_eq!(bank.temperature_factor, 1.52);
+    let finding =
+        Finding::TemperatureOutsideTable { given: Celsius(-15.0), lowest: Celsius(-3.9), highest: Celsius(25.0) };
+    assert!(sheet.findings.contains(&finding));
+}
+
+#[test]
+fn a_draw_faster_than_any_rating_is_told() {
+    let mut survey = shop(Chemistry::VrlaAgm);
+    survey.battery_ratings = vec![rating(20.0, 100.0), rating(10.0, 93.0)];
+    let (_, sheet) = bank(&survey, &[(300.0, 1.0)]);
+    let told = sheet.findings.iter().find_map(|finding| match finding {
+        Finding::OutsideRatings { hours, shortest, longest } => Some((*hours, *shortest, *longest)),
+        _ => None,
+    });
+    let (hours, shortest, longest) = told.expect("an hour's cut empties the bank in less than ten");
+    assert!(hours < shortest && (shortest, longest) == (Hours(10.0), Hours(20.0)));
+}
+
+#[test]
+fn nothing_drawn_still_gets_one_string_of_the_smallest_block() {
+    let mut unit = example::inverter(Watts(0.0));
+    unit.losses.no_load = Watts(0.0);
+    let survey = shop(Chemistry::VrlaAgm);
+    let factors = Assumptions::defaults(Chemistry::VrlaAgm);
+    let bank = bank_for(&[vec![(Watts(0.0), Hours(4.0))]], &survey, &unit, &factors, &mut Sheet::default());
+    assert_eq!((bank.required.0, bank.strings, bank.installed.0), (0.0, 1, 7.0));
+    assert!(bank.depth_of_discharge == 0.0 && bank.aged_resistance.0.is_finite());
+}
+
+#[test]
+fn every_figure_of_the_bank_stands_on_the_sheet_with_the_same_value() {
+    let (bank, sheet) = bank(&shop(Chemistry::FloodedTubular), &[(300.0, 2.0), (700.0, 1.0), (150.0, 3.0)]);
+    let json = serde_json::to_value(&bank).unwrap();
+    let methods = json["methods"].as_object().unwrap().iter().map(|(key, value)| (format!("methods.{key}"), value));
+    let flat = json.as_object().unwrap().iter().map(|(key, value)| (key.clone(), value)).chain(methods);
+    for (key, value) in flat.filter_map(|(key, value)| Some((key, value.as_f64()?))) {
+        let figure = format!("bank.{key}");
+        let line = sheet.working.iter().find(|line| line.figure == figure);
+        assert_eq!(line.map(|line| line.result), Some(value), "{figure}");
+    }
+}
+
+#[test]
+fn the_worst_of_many_starts_is_as_large_as_the_largest_alone() {
+    let survey = shop(Chemistry::VrlaAgm);
+    let factors = Assumptions::defaults(Chemistry::VrlaAgm);
+    let unit = example::inverter(Watts(900.0));
+    let light = vec![(Watts(100.0), Hours(4.0))];
+    let early = vec![(Watts(700.0), Hours(1.0)), (Watts(100.0), Hours(3.0))];
+    let late = vec![(Watts(100.0), Hours(3.0)), (Watts(700.0), Hours(1.0))];
+    let size = |cuts: &[Vec<_>]| bank_for(cuts, &survey, &unit, &factors, &mut Sheet::default());
+    let all = size(&[light, early, late.clone()]);
+    let alone = size(&[late]);
+    assert!((all.methods.section.0 - alone.methods.section.0).abs() < 1e-9);
+    assert!((all.methods.peukert.0 - alone.methods.peukert.0).abs() < 1e-9);
+}
+
+fn chemistry() -> impl Strategy<Value = Chemistry> {
+    prop::sample::select(Chemistry::ALL.to_vec())
+}
+
+fn steps() -> impl Strategy<Value = Vec<(f64, f64)>> {
+    prop::collection::vec((0.0..1500.0, 0.05..4.0), 1..8)
+}
+
+/// One to four ratings that a battery could have: the exponent rises as the rate does.
+fn ratings() -> impl Strategy<Value = Vec<BatteryRating>> {
+    (0.02..0.25_f64, 0.0..0.1_f64, 1_usize..5).prop_map(|(slow, more, count)| {
+        let mut capacity = 100.0;
+        let times = [20.0, 10.0, 5.0, 1.0_f64];
+        let mut ratings = vec![rating(20.0, capacity)];
+        for at in 1..count {
+            let k = 1.0 + slow + more * at as f64;
+            capacity *= (times[at] / times[at - 1]).powf(1.0 - 1.0 / k);
+            ratings.push(rating(times[at], capacity));
+        }
+        ratings
+    })
+}
+
+fn sized(survey: &crate::sizing::Survey, cut: &[(f64, f64)]) -> Bank {
+    bank(survey, cut).0
+}
+
+proptest! {
+    #[test]
+    fn the_bank_offered_is_never_smaller_than_what_is_required(kind in chemistry(), cut in steps(), ratings in ratings()) {
+        let mut survey = shop(kind);
+        survey.battery_ratings = ratings;
+        let bank = sized(&survey, &cut);
+        prop_assert!(bank.installed >= bank.required);
+        prop_assert!(bank.required >= bank.methods.peukert && bank.required >= bank.methods.section);
+        prop_assert!(bank.depth_of_discharge <= bank.depth_of_discharge_max);
+        prop_assert!(bank.aged_resistance.0.is_finite() && bank.end_open_circuit.0 > 0.0);
+    }
+
+    #[test]
+    fn a_colder_bank_is_never_smaller(kind in chemistry(), cut in steps(), one in -20.0..40.0, other in -20.0..40.0) {
+        let mut survey = shop(kind);
+        survey.choice.bus = Some(BusVolts::V48);
+        let mut at = |celsius: f64| {
+            survey.site.battery_coldest = Celsius(celsius);
+            sized(&survey, &cut).required
+        };
+        prop_assert!(at(f64::min(one, other)) >= at(f64::max(one, other)));
+    }
+
+    #[test]
+    fn a_heavier_load_never_gets_a_smaller_bank_on_the_same_inverter(
+        kind in chemistry(), cut in steps(), ratings in ratings(), at in 0_usize..8, more in 0.0..800.0,
+    ) {
+        let mut survey = shop(kind);
+        survey.choice.bus = Some(BusVolts::V48);
+        survey.battery_ratings = ratings;
+        let mut heavier = cut.clone();
+        heavier[at % cut.len()].0 += more;
+        let (light, heavy) = (sized(&survey, &cut), sized(&survey, &heavier));
+        prop_assert!(heavy.required.0 >= light.required.0 * (1.0 - 1e-9));
+        prop_assert!(heavy.methods.section.0 >= light.methods.section.0 * (1.0 - 1e-9));
+        prop_assert!(heavy.methods.peukert.0 >= light.methods.peukert.0 * (1.0 - 1e-9));
+    }
+
+    #[test]
+    fn a_longer_cut_never_gets_a_smaller_bank(kind in chemistry(), cut in steps(), watts in 0.0..1500.0, hours in 0.1..4.0) {
+        let mut survey = shop(kind);
+        survey.choice.bus = Some(BusVolts::V48);
+        let mut longer = cut.clone();
+        longer.push((watts, hours));
+        prop_assert!(sized(&survey, &longer).required.0 >= sized(&survey, &cut).required.0 * (1.0 - 1e-9));
+    }
+
+    #[test]
+    fn twice_the_volts_want_half_the_ampere_hours(kind in chemistry(), cut in steps()) {
+        let mut survey = shop(kind);
+        let mut at = |bus| {
+            survey.choice.bus = Some(bus);
+            sized(&survey, &cut).required.0
+        };
+        let (low, high) = (at(BusVolts::V12), at(BusVolts::V48));
+        prop_assert!((low / high - 4.0).abs() < 1e-9);
+    }
+}
