@@ -6,6 +6,7 @@
 
 pub mod assumptions;
 pub mod battery_bank;
+pub mod charger;
 pub mod design;
 pub mod finding;
 pub mod sheet;
