@@ -9,9 +9,11 @@ pub mod battery_bank;
 pub mod charger;
 pub mod design;
 pub mod finding;
+pub mod life;
 pub mod sheet;
 pub mod survey;
 pub mod tables;
+pub mod ventilation;
 
 pub use assumptions::Assumptions;
 pub use design::Design;
