@@ -213,12 +213,7 @@ mod tests {
     #[test]
     fn every_figure_of_the_life_stands_on_the_sheet_with_the_same_value() {
         let (life, sheet) = lived(|_| ());
-        let json = serde_json::to_value(&life).unwrap();
-        for (key, value) in json.as_object().unwrap() {
-            let figure = format!("life.{key}");
-            let line = sheet.working.iter().find(|line| line.figure == figure);
-            assert_eq!(line.map(|line| line.result), value.as_f64(), "{figure}");
-        }
+        example::assert_on_sheet("life", &life, &sheet);
     }
 
     proptest! {

@@ -58,8 +58,7 @@ pub fn ventilation(survey: &Survey, bank: &Bank, sheet: &mut Sheet) -> Ventilati
     let kind = properties(survey.choice.chemistry);
     let gas = kind.gassing.map_or(0.0, |gassing| gassing.boost);
     let cells = f64::from(kind.cells_per_block * bank.blocks_in_series);
-    let curve = Curve::new(&survey.battery_ratings, bank.peukert_exponent, kind.peukert_holds_from).0;
-    let capacity = bank.installed * curve.share_at(Hours(10.0));
+    let capacity = bank.installed * Curve::of_bank(survey, bank).share_at(Hours(10.0));
     let airflow = airflow(cells, gas, capacity, sheet);
     let opening = opening(airflow, sheet);
     judge(survey, opening, sheet);
@@ -100,7 +99,7 @@ fn judge(survey: &Survey, opening: SquareCentimetres, sheet: &mut Sheet) {
 #[cfg(test)]
 mod tests {
     use super::*;
-    use crate::sizing::battery_bank::example::{bank, shop};
+    use crate::sizing::battery_bank::example::{self, bank, shop};
     use crate::sizing::survey::{BatteryRating, BusVolts, Chemistry};
 
     /// A bank of one string of 12 V blocks of 100 Ah at the 10 h rate.
@@ -169,13 +168,6 @@ mod tests {
         let (survey, bank) = hundred(Chemistry::FloodedTubular);
         let mut sheet = Sheet::default();
         let air = ventilation(&survey, &bank, &mut sheet);
-        for (figure, value) in [
-            ("ventilation.airflow_m3_per_h", air.airflow.0),
-            ("ventilation.opening_cm2", air.opening.0),
-            ("ventilation.safe_distance_mm", air.safe_distance.0),
-        ] {
-            let line = sheet.working.iter().find(|line| line.figure == figure);
-            assert_eq!(line.map(|line| line.result), Some(value), "{figure}");
-        }
+        example::assert_on_sheet("ventilation", &air, &sheet);
     }
 }

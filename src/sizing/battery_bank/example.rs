@@ -100,3 +100,14 @@ pub(crate) fn bank_with(survey: &Survey, cut: &[(f64, f64)], assumptions: &Assum
     let bank = super::bank_for(&[steps], survey, &unit, assumptions, &mut sheet);
     (bank, sheet)
 }
+
+/// Every number of a stage stands on the sheet under its path, with the very same value.
+pub(crate) fn assert_on_sheet(stage: &str, answer: &impl serde::Serialize, sheet: &Sheet) {
+    let json = serde_json::to_value(answer).expect("an answer is JSON");
+    for (key, value) in json.as_object().expect("a stage is an object") {
+        let Some(value) = value.as_f64() else { continue };
+        let figure = format!("{stage}.{key}");
+        let lines: Vec<_> = sheet.working.iter().filter(|line| line.figure == figure).map(|line| line.result).collect();
+        assert_eq!(lines, [value], "{figure}");
+    }
+}

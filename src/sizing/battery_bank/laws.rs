@@ -125,14 +125,8 @@ fn nothing_drawn_still_gets_one_string_of_the_smallest_block() {
 #[test]
 fn every_figure_of_the_bank_stands_on_the_sheet_with_the_same_value() {
     let (bank, sheet) = bank(&shop(Chemistry::FloodedTubular), &[(300.0, 2.0), (700.0, 1.0), (150.0, 3.0)]);
-    let json = serde_json::to_value(&bank).unwrap();
-    let methods = json["methods"].as_object().unwrap().iter().map(|(key, value)| (format!("methods.{key}"), value));
-    let flat = json.as_object().unwrap().iter().map(|(key, value)| (key.clone(), value)).chain(methods);
-    for (key, value) in flat.filter_map(|(key, value)| Some((key, value.as_f64()?))) {
-        let figure = format!("bank.{key}");
-        let line = sheet.working.iter().find(|line| line.figure == figure);
-        assert_eq!(line.map(|line| line.result), Some(value), "{figure}");
-    }
+    example::assert_on_sheet("bank", &bank, &sheet);
+    example::assert_on_sheet("bank.methods", &bank.methods, &sheet);
 }
 
 #[test]

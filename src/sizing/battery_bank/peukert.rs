@@ -6,12 +6,14 @@
 //! the slowest rating earns no bonus: there the plain ampere-hours of that rating hold, since the
 //! law would promise a charge without limit.
 //!
-//! Source (from memory): W. Peukert, *Elektrotechnische Zeitschrift*, 1897; J. W. Doerffel and
+//! Source (from memory): W. Peukert, *Elektrotechnische Zeitschrift*, 1897; D. Doerffel and
 //! S. Abu-Sharkh, *Journal of Power Sources* 155 (2006) 395, on where the law fails.
 
 use super::duty_cycle::Cut;
+use crate::sizing::design::Bank;
 use crate::sizing::finding::Finding;
-use crate::sizing::survey::BatteryRating;
+use crate::sizing::survey::{BatteryRating, Survey};
+use crate::sizing::tables::chemistries::properties;
 use crate::units::{AmpHours, Amps, Hours};
 
 /// The rate that capacities are given at when no data sheet says otherwise.
@@ -83,6 +85,12 @@ impl Curve {
         let fastest = ratings[0].hours;
         let exponents = exponents.into_iter().flatten().collect();
         (Self { rated: reference.hours, block: Some(reference.capacity), points, exponents, fastest }, None)
+    }
+
+    /// The curve of a bank that is sized already.
+    pub fn of_bank(survey: &Survey, bank: &Bank) -> Self {
+        let from = properties(survey.choice.chemistry).peukert_holds_from;
+        Self::new(&survey.battery_ratings, bank.peukert_exponent, from).0
     }
 
     /// One rating and an exponent.

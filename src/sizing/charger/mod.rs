@@ -60,7 +60,7 @@ pub fn plan(
 }
 
 fn refill(survey: &Survey, bank: &Bank, kind: &Properties, assumptions: &Assumptions) -> Refill {
-    let curve = Curve::new(&survey.battery_ratings, bank.peukert_exponent, kind.peukert_holds_from).0;
+    let curve = Curve::of_bank(survey, bank);
     Refill {
         capacity: bank.installed * curve.share_at(Hours(20.0)),
         taken: bank.outage,
@@ -255,11 +255,6 @@ mod tests {
     #[test]
     fn every_figure_of_the_charger_stands_on_the_sheet_with_the_same_value() {
         let (charger, _, sheet) = planned(&example::shop(Chemistry::FloodedFlatPlate));
-        let json = serde_json::to_value(&charger).unwrap();
-        for (key, value) in json.as_object().unwrap().iter().filter_map(|(key, value)| Some((key, value.as_f64()?))) {
-            let figure = format!("charger.{key}");
-            let line = sheet.working.iter().find(|line| line.figure == figure);
-            assert_eq!(line.map(|line| line.result), Some(value), "{figure}");
-        }
+        example::assert_on_sheet("charger", &charger, &sheet);
     }
 }
