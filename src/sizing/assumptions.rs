@@ -236,6 +236,9 @@ assumptions! {
     /// Time a protective device may take to break a fault.
     fault_clearing_s = |_: &Properties| 0.1, "Time in which a fuse or breaker clears a fault", "s", 0.001..=5.0,
         "below 0.1 s the device's let-through energy rules", Read;
+    /// By how much one string's resistance may fall below the others'.
+    string_resistance_spread = |_: &Properties| 0.05, "Spread of resistance between parallel strings", "", 0.0..=0.5,
+        "blocks of one batch, leads of equal length, size and lug to one busbar", OurRule;
     /// Short-circuit current of a lead-acid battery over its capacity, for breaking capacity.
     fault_current_per_ah = |_: &Properties| 20.0, "Short-circuit current of lead-acid over its capacity, upper bound", "A/Ah", 2.0..=60.0,
         "a switchgear maker's note on DC distribution: near 10, always under 20", Read;

@@ -106,8 +106,12 @@ pub enum Finding {
     SealedWithoutAir { opening_cm2: f64 },
     /// The no-load draw takes a large share of the bank.
     NoLoadDrawHeavy { draw: Watts, share: f64 },
-    /// Aluminium is asked for a size in which it is not made.
+    /// Aluminium was asked for and is not made as a flexible battery lead: copper was taken for this run.
     NoAluminium { run: Run, smallest_mm2: f64 },
+    /// A lithium bank's fault current does not follow from its capacity: the maker's figure is needed.
+    FaultCurrentNeedsMaker { estimate: Kiloamps },
+    /// On battery the unit gives less than what trips the breaker at once: the unit's own shutdown must end a fault.
+    BreakerSlowOnBattery { run: Run, gives: Amps, trips_at: Amps },
     /// The chosen conductor's resistance is outside what the table covers.
     ConductorOutsideTable { run: Run, resistance: OhmsPerKilometre },
     /// A code letter without an upper end.
@@ -133,7 +137,6 @@ impl Finding {
             | BreakingCapacityTooSmall { .. }
             | FaultHeatsCable { .. }
             | AmbientOutsideTable { .. }
-            | NoAluminium { .. }
             | FloodedWithoutAir { .. }
             | LithiumInTheCold { .. } => Severity::Stop,
             MotorStartMarginal { .. }
@@ -158,8 +161,13 @@ impl Finding {
             | BatteryTooHot { .. }
             | SealedWithoutAir { .. }
             | ConductorOutsideTable { .. }
+            | NoAluminium { .. }
+            | FaultCurrentNeedsMaker { .. }
             | CodeLetterOpen { .. } => Severity::Warn,
-            SquareWaveDisliked { .. } | TypicalRatings { .. } | NoLoadDrawHeavy { .. } => Severity::Note,
+            SquareWaveDisliked { .. }
+            | TypicalRatings { .. }
+            | NoLoadDrawHeavy { .. }
+            | BreakerSlowOnBattery { .. } => Severity::Note,
         }
     }
 }
