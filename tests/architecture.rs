@@ -9,8 +9,10 @@ fn rust_files(path: &Path) -> Vec<PathBuf> {
         return vec![path.to_owned()];
     }
     let entries = fs::read_dir(path).unwrap_or_else(|error| panic!("{}: {error}", path.display()));
-    let mut files: Vec<PathBuf> =
-        entries.flat_map(|entry| rust_files(&entry.unwrap().path())).filter(|file| file.extension().is_some_and(|e| e == "rs")).collect();
+    let mut files: Vec<PathBuf> = entries
+        .flat_map(|entry| rust_files(&entry.unwrap().path()))
+        .filter(|file| file.extension().is_some_and(|e| e == "rs"))
+        .collect();
     files.sort();
     files
 }
@@ -38,7 +40,18 @@ fn assert_silent(rooms: &[&str], words: &[&str]) {
 const ENGINE: &[&str] = &["units.rs", "sizing"];
 const RECORDS: &[&str] = &["accounts.rs", "jobs.rs", "quotes.rs", "money.rs"];
 const TEXT: &[&str] = &["wording", "reading", "drawing"];
-const WORLD: &[&str] = &["axum", "sqlx", "tokio", "std::fs", "std::net", "std::env", "SystemTime", "Instant::now", "Timestamp::now", "getrandom"];
+const WORLD: &[&str] = &[
+    "axum",
+    "sqlx",
+    "tokio",
+    "std::fs",
+    "std::net",
+    "std::env",
+    "SystemTime",
+    "Instant::now",
+    "Timestamp::now",
+    "getrandom",
+];
 
 #[test]
 fn the_pure_part_never_meets_web_database_disk_clock_or_chance() {
@@ -54,13 +67,26 @@ fn the_pure_part_never_meets_web_database_disk_clock_or_chance() {
 fn the_engine_knows_nothing_of_what_is_built_on_it() {
     assert_silent(
         ENGINE,
-        &["crate::documents", "crate::wording", "crate::reading", "crate::jobs", "crate::quotes", "crate::accounts", "crate::store", "crate::web", "crate::cli"],
+        &[
+            "crate::documents",
+            "crate::wording",
+            "crate::reading",
+            "crate::jobs",
+            "crate::quotes",
+            "crate::accounts",
+            "crate::store",
+            "crate::web",
+            "crate::cli",
+        ],
     );
 }
 
 #[test]
 fn documents_and_records_know_neither_store_nor_pages() {
-    assert_silent(&["documents"], &["crate::jobs", "crate::quotes", "crate::accounts", "crate::store", "crate::web", "crate::cli"]);
+    assert_silent(
+        &["documents"],
+        &["crate::jobs", "crate::quotes", "crate::accounts", "crate::store", "crate::web", "crate::cli"],
+    );
     assert_silent(RECORDS, &["crate::store", "crate::web", "crate::cli"]);
 }
 

@@ -140,6 +140,15 @@ assumptions! {
     /// Rating lost per 100 m above 1000 m.
     derating_per_100_m = |_: &Properties| 0.01, "Inverter rating lost per 100 m above 1000 m", "", 0.0..=0.05,
         "air-cooled drives: 1 % per 100 m above 1000 m", Read;
+    /// Rating that heat and height leave at least.
+    derating_least = |_: &Properties| 0.5, "Least share of the rating that heat and height leave", "", 0.1..=1.0,
+        "beyond half the rating the rule no longer holds", OurRule;
+    /// What a square wave leaves of a start.
+    square_wave_surge_share = |_: &Properties| 0.8, "Share of a motor's start that a square wave leaves", "", 0.3..=1.0,
+        "harmonic current makes heat and no torque; a fifth is our margin for it", OurRule;
+    /// Share of the bank's energy that the unit may take for itself without a note.
+    no_load_share_note = |_: &Properties| 0.2, "Share of the energy that the unit may draw for itself", "", 0.0..=1.0,
+        "15 to 30 W over a night are a fifth of a small bank", CommonPractice;
     /// Break at changeover of a trade-size unit.
     changeover_ms = |_: &Properties| 10.0, "Break at changeover", "ms", 0.0..=500.0,
         "6 to 10 ms in the narrow setting, 40 to 50 ms in the wide one", CommonPractice;

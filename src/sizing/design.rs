@@ -9,9 +9,8 @@ use super::finding::Finding;
 use super::sheet::Line;
 use super::survey::{BusVolts, TimeOfDay};
 use crate::units::{
-    AcVolts, AmpHours, Amps, Celsius, CubicMetresPerHour, DcVolts, DistortionVoltAmps, Fraction, Hours, Kiloamps,
-    Kilograms, Metres, Millimetres, Milliseconds, Ohms, Seconds, SquareCentimetres, SquareMillimetres, Vars, VoltAmps,
-    WattHours, Watts, Years,
+    AcVolts, AmpHours, Amps, Celsius, CubicMetresPerHour, DcVolts, Fraction, Hours, Kiloamps, Kilograms, Metres,
+    Millimetres, Milliseconds, Ohms, Seconds, SquareCentimetres, SquareMillimetres, VoltAmps, WattHours, Watts, Years,
 };
 
 /// The whole answer.
@@ -76,6 +75,22 @@ pub struct Demand {
     pub average_outage: WattHours,
     /// The day in stretches of constant load, from midnight to midnight.
     pub day: Vec<DayStretch>,
+    /// The hardest start of each motor.
+    #[serde(skip)]
+    pub starts: Vec<StartNeed>,
+}
+
+/// What one motor asks for when it starts at its hardest hour, the rest running.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct StartNeed {
+    /// Its row in the survey.
+    pub row: usize,
+    /// The motor's own start.
+    pub start: VoltAmps,
+    /// The start with the rest running.
+    pub needed: VoltAmps,
+    /// The real power of that.
+    pub needed_w: Watts,
 }
 
 /// A stretch of the day in which nothing changes.
@@ -96,12 +111,6 @@ pub struct DayStretch {
     /// Apparent power with everything on that may be on.
     #[serde(rename = "peak_va")]
     pub peak_va: VoltAmps,
-    /// Reactive part of it.
-    #[serde(skip)]
-    pub peak_vars: Vars,
-    /// Distortion part of it.
-    #[serde(skip)]
-    pub peak_distortion: DistortionVoltAmps,
 }
 
 /// The form of the output.

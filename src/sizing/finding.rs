@@ -46,8 +46,8 @@ pub enum Finding {
     MainsOutsideWideWindow { lowest: AcVolts, highest: AcVolts, window: (AcVolts, AcVolts) },
     /// The break at changeover is longer than a load rides through.
     ChangeoverTooSlow { load: String, bears: Milliseconds, breaks: Milliseconds },
-    /// A square wave on offer is refused by a load.
-    SquareWaveRefused { load: String },
+    /// A square wave is refused by a load: a sine is fitted, unless the unit that makes it is to be used again.
+    SquareWaveRefused { load: String, reused: bool },
     /// A square wave on offer is borne, but not liked, by a load.
     SquareWaveDisliked { load: String },
     /// A life, a treatment or a product hangs on a load.
@@ -127,7 +127,8 @@ impl Finding {
             | BankSagsAtStart { .. }
             | NoInverterFits { .. }
             | ReusedInverterTooSmall { .. }
-            | SquareWaveRefused { .. }
+            | SquareWaveRefused { reused: true, .. }
+            | SurgeTooShort { .. }
             | CurrentAboveCable { .. }
             | TooManyStrings { .. }
             | NoMains
@@ -140,7 +141,7 @@ impl Finding {
             | FloodedWithoutAir { .. }
             | LithiumInTheCold { .. } => Severity::Stop,
             MotorStartMarginal { .. }
-            | SurgeTooShort { .. }
+            | SquareWaveRefused { reused: false, .. }
             | RestartTogetherTooMuch { .. }
             | MainsOutsideNarrowWindow { .. }
             | MainsOutsideWideWindow { .. }

@@ -101,13 +101,25 @@ impl Browser {
     /// Ticks or picks the choice of a name and value.
     pub async fn choose(&self, name: &str, value: &str) {
         let css = format!("input[name='{name}'][value='{value}']");
-        self.driver.find(By::Css(css.as_str())).await.unwrap_or_else(|_| panic!("no choice {name}={value}")).click().await.unwrap();
+        self.driver
+            .find(By::Css(css.as_str()))
+            .await
+            .unwrap_or_else(|_| panic!("no choice {name}={value}"))
+            .click()
+            .await
+            .unwrap();
     }
 
     /// Presses the button or link of these words.
     pub async fn press(&self, words: &str) {
         let path = format!("//*[self::button or self::a][contains(normalize-space(.), \"{words}\")]");
-        self.driver.find(By::XPath(path.as_str())).await.unwrap_or_else(|_| panic!("nothing to press says {words}")).click().await.unwrap();
+        self.driver
+            .find(By::XPath(path.as_str()))
+            .await
+            .unwrap_or_else(|_| panic!("nothing to press says {words}"))
+            .click()
+            .await
+            .unwrap();
     }
 
     /// All text that the page shows.

@@ -83,6 +83,7 @@ pub(crate) fn demand() -> Demand {
         sized_start: TimeOfDay::MIDNIGHT,
         average_outage: WattHours(1500.0),
         day: vec![],
+        starts: vec![],
     }
 }
 

@@ -24,8 +24,9 @@ use peukert::Curve;
 use strings::Strings;
 
 use super::assumptions::Assumptions;
-use super::design::{Bank, Inverter, Methods, RulingMethod};
+use super::design::{Bank, Demand, Inverter, Methods, RulingMethod};
 use super::finding::Finding;
+use super::load_survey;
 use super::sheet::Sheet;
 use super::survey::{BusVolts, Survey};
 use super::tables::battery_temperature;
@@ -49,6 +50,17 @@ struct Answer {
     required: AmpHours,
     ruled_by: RulingMethod,
     strings: Strings,
+}
+
+/// The bank that carries the cut of a survey, at its hardest start or at the one asked for.
+pub fn bank(
+    survey: &Survey,
+    demand: &Demand,
+    inverter: &Inverter,
+    assumptions: &Assumptions,
+    sheet: &mut Sheet,
+) -> Bank {
+    bank_for(&load_survey::cuts(survey, demand), survey, inverter, assumptions, sheet)
 }
 
 /// The bank that carries any one of these cuts.

@@ -1,9 +1,12 @@
 //! Tables of standards and of the trade, one file each: headed by standard, year, table and units.
 
+pub mod altitude;
 pub mod battery_blocks;
 pub mod battery_temperature;
 pub mod charger_currents;
 pub mod chemistries;
+pub mod motors;
+pub mod trade_sizes;
 
 /// Reads a table of points, first column falling, along straight lines; beyond its ends the end value holds.
 pub(crate) fn between(points: &[(f64, f64)], at: f64) -> f64 {

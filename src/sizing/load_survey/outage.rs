@@ -1,0 +1,80 @@
+//! A cut laid over the day: its energy from any start, and the start that costs most.
+
+use crate::sizing::design::{DayStretch, Demand};
+use crate::sizing::survey::{StartsAt, Survey, TimeOfDay};
+use crate::units::{Hours, WattHours, Watts};
+
+const DAY: f64 = 24.0;
+
+/// The cuts that the bank must carry, each as average power and length, in the order of time: one
+/// where the start was asked for, one for each start that may be the worst where it was not.
+pub fn cuts(survey: &Survey, demand: &Demand) -> Vec<Vec<(Watts, Hours)>> {
+    let autonomy = survey.outage.autonomy;
+    let starts = match survey.outage.starts_at {
+        StartsAt::At(time) => vec![time.hours()],
+        StartsAt::Worst => candidate_starts(&demand.day, autonomy),
+    };
+    starts.into_iter().map(|start| steps(&demand.day, start, autonomy)).collect()
+}
+
+/// The starts among which the worst one is.
+///
+/// Energy and step sums are piecewise linear in the start: they bend only where the start or the end
+/// of the cut meets a boundary of the day, so their greatest value lies at such a start.
+pub fn candidate_starts(day: &[DayStretch], autonomy: Hours) -> Vec<Hours> {
+    let boundaries = day.iter().map(|stretch| stretch.from.hours());
+    let mut starts: Vec<_> = boundaries.flat_map(|at| [at, Hours((at.0 - autonomy.0).rem_euclid(DAY))]).collect();
+    starts.sort_by(Hours::order);
+    starts.dedup();
+    starts
+}
+
+/// Average power and length of each step of a cut, in the order of time; equal neighbours are one.
+pub fn steps(day: &[DayStretch], start: Hours, autonomy: Hours) -> Vec<(Watts, Hours)> {
+    let mut steps: Vec<(Watts, Hours)> = Vec::with_capacity(day.len() + 1);
+    let mut index = day.iter().rposition(|stretch| stretch.from.hours() <= start).unwrap_or(0);
+    let (mut now, mut left) = (start, autonomy);
+    while left > Hours::ZERO {
+        let stretch = &day[index];
+        let lasts = (stretch.to.hours() - now).min(left);
+        match steps.last_mut() {
+            Some((power, length)) if *power == stretch.average => *length = *length + lasts,
+            _ if lasts > Hours::ZERO => steps.push((stretch.average, lasts)),
+            _ => {}
+        }
+        left = left - lasts;
+        index = (index + 1) % day.len();
+        now = day[index].from.hours();
+    }
+    steps
+}
+
+/// Energy of a cut from a start.
+pub fn energy(day: &[DayStretch], start: Hours, autonomy: Hours) -> WattHours {
+    let days = (autonomy.0 / DAY).floor();
+    let part = steps(day, start, Hours(autonomy.0 - days * DAY));
+    day_energy(day) * days + part.into_iter().map(|(power, length)| power * length).sum()
+}
+
+/// Energy of a whole day.
+pub fn day_energy(day: &[DayStretch]) -> WattHours {
+    day.iter().map(|stretch| stretch.average * (stretch.to.hours() - stretch.from.hours())).sum()
+}
+
+/// The start that costs most energy, and that energy; the earliest of equals.
+pub fn worst_start(day: &[DayStretch], autonomy: Hours) -> (Hours, WattHours) {
+    let mut worst = (Hours::ZERO, WattHours(-1.0));
+    for start in candidate_starts(day, autonomy) {
+        let energy = energy(day, start, autonomy);
+        if energy.0 > worst.1.0 * (1.0 + 1e-12) {
+            worst = (start, energy);
+        }
+    }
+    worst
+}
+
+/// The minute of the day that a moment falls in.
+pub fn minute(moment: Hours) -> TimeOfDay {
+    let minutes = (moment.0 * 60.0).round().rem_euclid(24.0 * 60.0);
+    TimeOfDay::from_minutes(minutes as u16).unwrap_or(TimeOfDay::MIDNIGHT)
+}
