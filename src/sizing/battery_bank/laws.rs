@@ -2,14 +2,14 @@
 
 use proptest::prelude::*;
 
-use super::example::{bank, bank_with, shop};
-use super::{bank_for, example};
+use super::example::{self, bank_with, shop};
+use super::{bank, bank_for};
 use crate::sizing::Assumptions;
 use crate::sizing::Sheet;
-use crate::sizing::design::{Bank, RulingMethod};
+use crate::sizing::design::{Bank, DayStretch, Demand, RulingMethod};
 use crate::sizing::finding::Finding;
-use crate::sizing::survey::{BatteryRating, BusVolts, Chemistry};
-use crate::units::{AmpHours, Celsius, Hours, Watts};
+use crate::sizing::survey::{BatteryRating, BusVolts, Chemistry, StartsAt, TimeOfDay};
+use crate::units::{AmpHours, Celsius, Hours, VoltAmps, Watts};
 
 fn rating(hours: f64, capacity: f64) -> BatteryRating {
     BatteryRating { hours: Hours(hours), capacity: AmpHours(capacity) }
@@ -52,9 +52,9 @@ fn a_heavy_load_is_given_higher_bus_volts_and_says_so_when_the_bus_is_forced() {
     let chemistry = Chemistry::FloodedTubular;
     for (watts, bus) in [(500.0, BusVolts::V12), (1200.0, BusVolts::V24), (2800.0, BusVolts::V48)] {
         let mut survey = shop(chemistry);
-        assert_eq!(bank(&survey, &[(watts, 1.0)]).0.bus, bus, "{watts} W");
+        assert_eq!(example::bank(&survey, &[(watts, 1.0)]).0.bus, bus, "{watts} W");
         survey.choice.bus = Some(BusVolts::V12);
-        let (forced, sheet) = bank(&survey, &[(watts, 1.0)]);
+        let (forced, sheet) = example::bank(&survey, &[(watts, 1.0)]);
         assert_eq!(forced.bus, BusVolts::V12);
         let told = sheet.findings.iter().any(|finding| matches!(finding, Finding::BusTooLow { .. }));
         assert_eq!(told, bus != BusVolts::V12, "{watts} W");
@@ -66,10 +66,10 @@ fn a_heavy_load_is_given_higher_bus_volts_and_says_so_when_the_bus_is_forced() {
 #[test]
 fn too_many_strings_raise_the_bus_and_are_a_stop_where_that_does_not_help() {
     let survey = shop(Chemistry::VrlaAgm);
-    let (raised, sheet) = bank(&survey, &[(600.0, 12.0)]);
+    let (raised, sheet) = example::bank(&survey, &[(600.0, 12.0)]);
     assert_eq!(raised.bus, BusVolts::V24, "one string at 12 V would not do: {raised:?}");
     assert!(!sheet.findings.iter().any(|finding| matches!(finding, Finding::TooManyStrings { .. })));
-    let (helpless, sheet) = bank(&survey, &[(4000.0, 20.0)]);
+    let (helpless, sheet) = example::bank(&survey, &[(4000.0, 20.0)]);
     assert_eq!(helpless.bus, BusVolts::V48);
     assert!(sheet.findings.contains(&Finding::TooManyStrings { strings: helpless.strings, most: 4 }));
     assert!(helpless.installed >= helpless.required);
@@ -78,9 +78,9 @@ fn too_many_strings_raise_the_bus_and_are_a_stop_where_that_does_not_help() {
 #[test]
 fn ratings_that_contradict_each_other_are_refused_and_the_typical_ones_used() {
     let mut survey = shop(Chemistry::VrlaGel);
-    let typical = bank(&survey, &[(300.0, 4.0)]).0;
+    let typical = example::bank(&survey, &[(300.0, 4.0)]).0;
     survey.battery_ratings = vec![rating(20.0, 100.0), rating(10.0, 110.0)];
-    let (refused, sheet) = bank(&survey, &[(300.0, 4.0)]);
+    let (refused, sheet) = example::bank(&survey, &[(300.0, 4.0)]);
     let finding =
         Finding::RatingsContradict { slow: (Hours(20.0), AmpHours(100.0)), fast: (Hours(10.0), AmpHours(110.0)) };
     assert!(sheet.findings.contains(&finding), "{:?}", sheet.findings);
@@ -91,7 +91,7 @@ fn ratings_that_contradict_each_other_are_refused_and_the_typical_ones_used() {
 fn colder_than_the_table_takes_the_coldest_row_and_says_so() {
     let mut survey = shop(Chemistry::FloodedTubular);
     survey.site.battery_coldest = Celsius(-15.0);
-    let (bank, sheet) = bank(&survey, &[(300.0, 4.0)]);
+    let (bank, sheet) = example::bank(&survey, &[(300.0, 4.0)]);
     assert_eq!(bank.temperature_factor, 1.52);
     let finding =
         Finding::TemperatureOutsideTable { given: Celsius(-15.0), lowest: Celsius(-3.9), highest: Celsius(25.0) };
@@ -102,7 +102,7 @@ fn colder_than_the_table_takes_the_coldest_row_and_says_so() {
 fn a_draw_faster_than_any_rating_is_told() {
     let mut survey = shop(Chemistry::VrlaAgm);
     survey.battery_ratings = vec![rating(20.0, 100.0), rating(10.0, 93.0)];
-    let (_, sheet) = bank(&survey, &[(300.0, 1.0)]);
+    let (_, sheet) = example::bank(&survey, &[(300.0, 1.0)]);
     let told = sheet.findings.iter().find_map(|finding| match finding {
         Finding::OutsideRatings { hours, shortest, longest } => Some((*hours, *shortest, *longest)),
         _ => None,
@@ -124,7 +124,7 @@ fn nothing_drawn_still_gets_one_string_of_the_smallest_block() {
 
 #[test]
 fn every_figure_of_the_bank_stands_on_the_sheet_with_the_same_value() {
-    let (bank, sheet) = bank(&shop(Chemistry::FloodedTubular), &[(300.0, 2.0), (700.0, 1.0), (150.0, 3.0)]);
+    let (bank, sheet) = example::bank(&shop(Chemistry::FloodedTubular), &[(300.0, 2.0), (700.0, 1.0), (150.0, 3.0)]);
     example::assert_on_sheet("bank", &bank, &sheet);
     example::assert_on_sheet("bank.methods", &bank.methods, &sheet);
 }
@@ -168,7 +168,7 @@ fn ratings() -> impl Strategy<Value = Vec<BatteryRating>> {
 }
 
 fn sized(survey: &crate::sizing::Survey, cut: &[(f64, f64)]) -> Bank {
-    bank(survey, cut).0
+    example::bank(survey, cut).0
 }
 
 proptest! {
@@ -227,5 +227,46 @@ proptest! {
         };
         let (low, high) = (at(BusVolts::V12), at(BusVolts::V48));
         prop_assert!((low / high - 4.0).abs() < 1e-9);
+    }
+}
+
+/// A day of stretches whose power changes on full quarters of an hour.
+fn day() -> impl Strategy<Value = Vec<DayStretch>> {
+    prop::collection::btree_map(1_u16..96, 0.0..900.0, 1..7).prop_map(|changes| {
+        let mut powers: Vec<_> = changes.into_iter().collect();
+        powers.insert(0, (0, powers[0].1 / 2.0));
+        let end = |at: usize| powers.get(at + 1).map_or(96, |next| next.0);
+        let time = |quarter: u16| TimeOfDay::from_minutes(quarter * 15).unwrap();
+        let stretch = |(at, &(quarter, watts)): (usize, &(u16, f64))| DayStretch {
+            from: time(quarter),
+            to: time(end(at)),
+            average: Watts(watts),
+            peak: Watts(watts),
+            peak_va: VoltAmps(watts),
+        };
+        powers.iter().enumerate().map(stretch).collect()
+    })
+}
+
+proptest! {
+    #[test]
+    fn no_start_of_the_day_asks_for_more_than_the_bank_gives(
+        day in day(), quarters in 1_u16..48, minute in 0_u16..1440, ratings in ratings(),
+    ) {
+        let mut survey = shop(Chemistry::VrlaAgm);
+        survey.outage.autonomy = Hours(f64::from(quarters) / 4.0);
+        survey.choice.bus = Some(BusVolts::V48);
+        survey.battery_ratings = ratings;
+        let demand = Demand { day, ..example::demand() };
+        let unit = example::inverter(Watts(1000.0));
+        let factors = Assumptions::defaults(Chemistry::VrlaAgm);
+        let mut size = |starts_at| {
+            survey.outage.starts_at = starts_at;
+            bank(&survey, &demand, &unit, &factors, &mut Sheet::default()).methods
+        };
+        let worst = size(StartsAt::Worst);
+        let at = size(StartsAt::At(TimeOfDay::from_minutes(minute).unwrap()));
+        prop_assert!(at.peukert.0 <= worst.peukert.0 * (1.0 + 1e-9), "{at:?} {worst:?}");
+        prop_assert!(at.section.0 <= worst.section.0 * 1.01, "{at:?} {worst:?}");
     }
 }

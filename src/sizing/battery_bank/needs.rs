@@ -25,6 +25,10 @@ pub struct Needs {
 /// With one cut every section of it is taken. With the cuts of a whole day, one for each start that
 /// may be the worst, the last section of each is enough: a section that ends earlier belongs to a
 /// cut that began earlier, and that one carries more behind it.
+///
+/// The step sum is greatest at one of these starts. A section may ask up to 1 % more between two of
+/// them (cuts of up to twelve hours), since it also turns where the load of long ago fades; the
+/// design margin covers that.
 pub fn needs(cuts: &[Cut], curve: &Curve) -> Needs {
     let mut emptied = AmpHours::ZERO;
     let mut hardest = 0;
