@@ -29,7 +29,7 @@ const CYCLES_PER_YEAR: Rule = Rule {
 const CYCLES: Rule = Rule {
     symbol: "N",
     name: "Cycles to 80 % of the capacity at the depth of the cut",
-    formula: "N = N_1 · (DoD/D_1)^(−b) between published points",
+    formula: "N = N_1 · (DoD/D_1)^(−b) between published points; N = N_1 · D_1/DoD below the shallowest",
     unit: "",
     source: "makers' data sheets; tubular and gel from memory. Sources differ three-fold",
     checked: Checked::FromMemory,
@@ -94,14 +94,18 @@ fn cycles(survey: &Survey, depth: f64, sheet: &mut Sheet) -> f64 {
     sheet.line("life.cycles", &CYCLES, &[("DoD", depth, "")], cycles_at(points, depth))
 }
 
+/// Below this depth a cut no longer counts as a cycle of its own.
+const LEAST_DEPTH: f64 = 0.01;
+
 /// Cycles at a depth, by the power law between neighbouring points.
 ///
-/// Shallower than the shallowest point earns no more cycles; deeper than the deepest follows the
-/// last pair.
+/// Deeper than the deepest point the law of the last pair goes on, with a finding. Shallower than
+/// the shallowest the charge turned over in a life stays the same, `N · D` is constant: less than
+/// the law would promise there (b is 1.5 to 2.5), and more than no gain at all.
 fn cycles_at(points: &[(f64, f64)], depth: f64) -> f64 {
     let (shallowest, most) = points[points.len() - 1];
     if depth <= shallowest {
-        return most;
+        return most * shallowest / depth.max(LEAST_DEPTH);
     }
     let at = points.windows(2).position(|pair| depth >= pair[1].0).unwrap_or(0);
     let ((deep, few), (shallow, many)) = (points[at], points[at + 1]);
@@ -162,7 +166,8 @@ mod tests {
             (0.5, 600.0, "maker's data sheet"),
             (0.3, 1500.0, "maker's data sheet"),
             (0.5_f64.sqrt(), 346.4, "power law half way: √(200 · 600)"),
-            (0.1, 1500.0, "no bonus below the shallowest point"),
+            (0.1, 4500.0, "the charge turned over stays that of 1500 cycles of 0.3"),
+            (0.0, 45000.0, "finite for no discharge at all"),
         ];
         for (depth, expected, source) in cases {
             let cycles = cycles_at(agm, depth);
@@ -218,7 +223,7 @@ mod tests {
 
     proptest! {
         #[test]
-        fn a_deeper_cut_never_gives_more_cycles(kind in 0_usize..5, one in 0.01..1.5_f64, other in 0.01..1.5_f64) {
+        fn a_deeper_cut_never_gives_more_cycles(kind in 0_usize..5, one in 0.0..1.5_f64, other in 0.0..1.5_f64) {
             let points = properties(Chemistry::ALL[kind]).cycles;
             prop_assert!(cycles_at(points, one.max(other)) <= cycles_at(points, one.min(other)));
         }
