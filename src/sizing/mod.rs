@@ -6,12 +6,14 @@
 
 pub mod assumptions;
 pub mod battery_bank;
+pub mod cables;
 pub mod charger;
 pub mod design;
 pub mod finding;
 pub mod inverter;
 pub mod life;
 pub mod load_survey;
+pub mod protection;
 pub mod sheet;
 pub mod surge;
 pub mod survey;

@@ -1,11 +1,16 @@
 //! Tables of standards and of the trade, one file each: headed by standard, year, table and units.
 
 pub mod altitude;
+pub mod ambient;
+pub mod ampacity;
 pub mod battery_blocks;
 pub mod battery_temperature;
 pub mod charger_currents;
 pub mod chemistries;
+pub mod conductors;
+pub mod grouping;
 pub mod motors;
+pub mod protection_ratings;
 pub mod trade_sizes;
 
 /// Reads a table of points, first column falling, along straight lines; beyond its ends the end value holds.

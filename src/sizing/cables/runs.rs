@@ -1,0 +1,294 @@
+//! The runs there are, and what each must carry.
+
+use super::paper::Paper;
+use crate::sizing::assumptions::Assumptions;
+use crate::sizing::design::{Bank, Charger, Demand, Inverter, Run};
+use crate::sizing::finding::Finding;
+use crate::sizing::sheet::{Checked, Rule, Sheet};
+use crate::sizing::survey::Survey;
+use crate::units::{Amps, Fraction, Kiloamps, Metres, Ohms, Watts};
+
+/// A string's share above the mean by more than this is told: our rule.
+const UNEVEN_ABOVE: f64 = 0.05;
+
+/// What the stages before have settled.
+#[derive(Clone, Copy)]
+pub struct Given<'a> {
+    /// Site, choice and lengths.
+    pub survey: &'a Survey,
+    /// What the loads ask for.
+    pub demand: &'a Demand,
+    /// The unit.
+    pub inverter: &'a Inverter,
+    /// The bank.
+    pub bank: &'a Bank,
+    /// The charger.
+    pub charger: &'a Charger,
+    /// The factors in force.
+    pub assumptions: &'a Assumptions,
+}
+
+/// Shares of the nominal volts that a run may lose.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct DropBounds {
+    /// Aimed at.
+    pub target: f64,
+    /// Doubtful above this.
+    pub warn: f64,
+    /// Never above this.
+    pub limit: f64,
+}
+
+/// What a run must carry, and how far.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct Plan {
+    /// Which run.
+    pub run: Run,
+    /// One way.
+    pub length: Metres,
+    /// Design current (I_b).
+    pub current: Amps,
+    /// Volts that the drop is a share of.
+    pub nominal: f64,
+    /// Of the current; one on the battery's side.
+    pub power_factor: Fraction,
+    /// Largest fault current.
+    pub fault: Kiloamps,
+    /// What it may lose.
+    pub drop: DropBounds,
+}
+
+impl Given<'_> {
+    /// Every run of this job, from the bank outwards.
+    pub fn plans(&self, sheet: &mut Sheet) -> Vec<Plan> {
+        let runs = &self.survey.runs;
+        let mut plans = Vec::with_capacity(5);
+        if self.bank.strings > 1 {
+            plans.push(self.string_lead(sheet));
+        }
+        plans.push(self.bank_to_inverter(sheet));
+        plans.extend(runs.charger_to_bank.map(|length| self.charger_to_bank(length, sheet)));
+        plans.push(self.inverter_to_board(sheet));
+        plans.push(self.mains_to_inverter(sheet));
+        plans
+    }
+
+    /// The largest current in or out of the bank: the unit's draw at the cut-off, or its charging current.
+    fn bank_current(&self) -> Amps {
+        match self.survey.runs.charger_to_bank {
+            Some(_) => self.bank.peak_current,
+            None => self.bank.peak_current.max(self.charger.current),
+        }
+    }
+
+    fn bank_to_inverter(&self, sheet: &mut Sheet) -> Plan {
+        let mut paper = Paper { run: Run::BankToInverter, sheet };
+        let values = [("I_peak", self.bank.peak_current.0, "A"), ("I_charge", self.charger.current.0, "A")];
+        let current = Amps(paper.line("design_current_a", &BANK_CURRENT, &values, self.bank_current().0));
+        let fault = self.bank_fault(&mut paper);
+        self.battery_plan(Run::BankToInverter, self.survey.runs.bank_to_inverter, current, fault)
+    }
+
+    fn charger_to_bank(&self, length: Metres, sheet: &mut Sheet) -> Plan {
+        let mut paper = Paper { run: Run::ChargerToBank, sheet };
+        let charging = self.charger.current.0;
+        let values = [("I_charge", charging, "A")];
+        let current = Amps(paper.line("design_current_a", &CHARGER_CURRENT, &values, charging));
+        let fault = self.bank_fault(&mut paper);
+        self.battery_plan(Run::ChargerToBank, length, current, fault)
+    }
+
+    /// A string carries its share and what its lower resistance draws on top.
+    fn string_lead(&self, sheet: &mut Sheet) -> Plan {
+        let mut paper = Paper { run: Run::StringLead, sheet };
+        let imbalance = self.imbalance(&mut paper);
+        let (whole, strings) = (self.bank_current(), f64::from(self.bank.strings));
+        let values = [("I_bank", whole.0, "A"), ("n", strings, ""), ("u", imbalance, "")];
+        let share = whole / strings * (1.0 + imbalance);
+        let current = Amps(paper.line("design_current_a", &STRING_CURRENT, &values, share.0));
+        let fault = self.string_fault(strings, &mut paper);
+        self.battery_plan(Run::StringLead, self.survey.runs.string_lead, current, fault)
+    }
+
+    /// How far the worst string's current is above the mean, when its resistance is below the others' by the
+    /// spread. The leads, of equal length, would even this out a little; that is not counted on.
+    fn imbalance(&self, paper: &mut Paper) -> f64 {
+        let spread = self.assumptions.string_resistance_spread;
+        let mut resistances = vec![Ohms(1.0); self.bank.strings as usize];
+        resistances[0] = Ohms(1.0 - spread);
+        let mean = Amps(1.0);
+        let worst = shares(mean * f64::from(self.bank.strings), &resistances)[0];
+        let values = [("n", f64::from(self.bank.strings), ""), ("s", spread, "")];
+        let worst_over_mean = paper.line("imbalance", &IMBALANCE, &values, worst / mean - 1.0);
+        if worst_over_mean > UNEVEN_ABOVE {
+            paper.sheet.find(Finding::StringsUneven { worst_over_mean });
+        }
+        worst_over_mean
+    }
+
+    fn battery_plan(&self, run: Run, length: Metres, current: Amps, fault: Kiloamps) -> Plan {
+        let &Assumptions { dc_drop_target: target, dc_drop_warn: warn, dc_drop_limit: limit, .. } = self.assumptions;
+        let drop = DropBounds { target, warn, limit };
+        Plan { run, length, current, nominal: self.bank.bus.volts().0, power_factor: Fraction::ONE, fault, drop }
+    }
+
+    /// Most that the bank gives into a bolted fault.
+    fn bank_fault(&self, paper: &mut Paper) -> Kiloamps {
+        let per_ah = self.assumptions.fault_current_per_ah;
+        let values = [("k", per_ah, "A/Ah"), ("C", self.bank.installed.0, "Ah")];
+        Kiloamps(paper.line("fault_current_ka", &BANK_FAULT, &values, per_ah * self.bank.installed.0 / 1000.0))
+    }
+
+    /// Most that the other strings give into a fault of this one.
+    fn string_fault(&self, strings: f64, paper: &mut Paper) -> Kiloamps {
+        let per_ah = self.assumptions.fault_current_per_ah;
+        let values = [("k", per_ah, "A/Ah"), ("C", self.bank.installed.0, "Ah"), ("n", strings, "")];
+        let fault = per_ah * self.bank.installed.0 * (strings - 1.0) / strings / 1000.0;
+        Kiloamps(paper.line("fault_current_ka", &STRING_FAULT, &values, fault))
+    }
+
+    /// The board's cable carries what the unit can give, not only what is on the list today.
+    fn inverter_to_board(&self, sheet: &mut Sheet) -> Plan {
+        let mut paper = Paper { run: Run::InverterToBoard, sheet };
+        let supply = self.survey.site.supply;
+        let (rating, running) = (self.inverter.rating, self.demand.running_va);
+        let values = [("S_rated", rating.0, "VA"), ("S_running", running.0, "VA"), ("U", supply.0, "V")];
+        let current: Amps = rating.max(running) / supply;
+        let current = Amps(paper.line("design_current_a", &BOARD_CURRENT, &values, current.0));
+        let fault = self.mains_fault(&mut paper);
+        let power_factor = share_of(self.demand.running.0, running.0);
+        self.supply_plan(Run::InverterToBoard, self.survey.runs.inverter_to_board, current, power_factor, fault)
+    }
+
+    fn mains_to_inverter(&self, sheet: &mut Sheet) -> Plan {
+        let mut paper = Paper { run: Run::MainsToInverter, sheet };
+        let incoming = self.charger.incoming_current;
+        let values = [("I_mains", incoming.0, "A")];
+        let current = Amps(paper.line("design_current_a", &MAINS_CURRENT, &values, incoming.0));
+        let fault = self.mains_fault(&mut paper);
+        let power_factor = self.incoming_power_factor();
+        self.supply_plan(Run::MainsToInverter, self.survey.runs.mains_to_inverter, current, power_factor, fault)
+    }
+
+    /// Of load and charger together.
+    fn incoming_power_factor(&self) -> Fraction {
+        let supply = self.survey.site.supply;
+        let charging = (supply * self.charger.input_current).0 * self.assumptions.charger_power_factor;
+        let real = self.demand.running + Watts(charging);
+        share_of(real.0, (supply * self.charger.incoming_current).0)
+    }
+
+    fn supply_plan(&self, run: Run, length: Metres, current: Amps, power_factor: Fraction, fault: Kiloamps) -> Plan {
+        let nominal = self.survey.site.supply.0;
+        Plan { run, length, current, nominal, power_factor, fault, drop: self.supply_drop(length) }
+    }
+
+    /// The allowed drop runs from the mains to the board, so both runs share it by their lengths.
+    fn supply_drop(&self, length: Metres) -> DropBounds {
+        let runs = &self.survey.runs;
+        let both = runs.inverter_to_board + runs.mains_to_inverter;
+        let limit = self.assumptions.ac_drop_limit;
+        let target = limit * if both > Metres::ZERO { length / both } else { 1.0 };
+        DropBounds { target, warn: target, limit }
+    }
+
+    /// Through the unit's bypass the board sees the fault current of the mains.
+    fn mains_fault(&self, paper: &mut Paper) -> Kiloamps {
+        let fault = self.assumptions.supply_fault_current_ka;
+        Kiloamps(paper.line("fault_current_ka", &MAINS_FAULT, &[("I_k", fault, "kA")], fault))
+    }
+}
+
+/// Currents of parallel strings of equal volts: `I_i = I · (1/R_i) / Σ(1/R_j)`.
+///
+/// Resistances must be above zero. Source: Kirchhoff's laws.
+pub fn shares(whole: Amps, resistances: &[Ohms]) -> Vec<Amps> {
+    let conductance: f64 = resistances.iter().map(|resistance| 1.0 / resistance.0).sum();
+    resistances.iter().map(|resistance| whole / (resistance.0 * conductance)).collect()
+}
+
+/// A ratio as a share of one; the whole where there is nothing to share.
+fn share_of(part: f64, whole: f64) -> Fraction {
+    if whole > 0.0 { Fraction::new((part / whole).clamp(0.0, 1.0)).unwrap_or(Fraction::ONE) } else { Fraction::ONE }
+}
+
+const BANK_CURRENT: Rule = Rule {
+    symbol: "I_b",
+    name: "Design current",
+    formula: "I_b = I_peak, or I_charge where it is larger and takes the same cable",
+    unit: "A",
+    source: "a battery's current is highest at its lowest volts",
+    checked: Checked::Derived,
+};
+
+const CHARGER_CURRENT: Rule = Rule { formula: "I_b = I_charge", source: "the setting of the charger", ..BANK_CURRENT };
+
+const STRING_CURRENT: Rule = Rule {
+    formula: "I_b = I_bank / n · (1 + u)",
+    source: "an equal share, and what a lower resistance draws on top",
+    ..BANK_CURRENT
+};
+
+const BOARD_CURRENT: Rule = Rule {
+    formula: "I_b = max(S_rated, S_running) / U",
+    source: "what the unit can give, whatever is on the list today",
+    checked: Checked::OurRule,
+    ..BANK_CURRENT
+};
+
+const MAINS_CURRENT: Rule = Rule { formula: "I_b = I_mains", source: "load and charger together", ..BANK_CURRENT };
+
+const IMBALANCE: Rule = Rule {
+    symbol: "u",
+    name: "Worst string's current over the mean, less one",
+    formula: "u = n / (1 + (n − 1) · (1 − s)) − 1",
+    unit: "",
+    source: "Kirchhoff's laws, one string lower in resistance by s than the others",
+    checked: Checked::Derived,
+};
+
+const BANK_FAULT: Rule = Rule {
+    symbol: "I_k",
+    name: "Largest fault current",
+    formula: "I_k = k · C / 1000",
+    unit: "kA",
+    source: "a switchgear maker's note on DC distribution: near 10 A/Ah, always under 20; not for lithium",
+    checked: Checked::Read,
+};
+
+const STRING_FAULT: Rule = Rule {
+    formula: "I_k = k · C · (n − 1) / n / 1000",
+    source: "the other strings feed the fault of this one; k by a switchgear maker's note on DC distribution",
+    ..BANK_FAULT
+};
+
+const MAINS_FAULT: Rule = Rule {
+    formula: "I_k as assumed for the mains, which the unit's bypass lets through",
+    source: "ask the distributor",
+    checked: Checked::CommonPractice,
+    ..BANK_FAULT
+};
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn strings_share_the_current_by_their_conductances() {
+        // Our own vector: 20, 20 and 24 mΩ at 120 A.
+        let currents = shares(Amps(120.0), &[Ohms(0.020), Ohms(0.020), Ohms(0.024)]);
+        for (current, expected) in currents.iter().zip([42.353, 42.353, 35.294]) {
+            assert!((current.0 - expected).abs() < 0.001, "{currents:?}");
+        }
+        assert!((currents[0].0 / 40.0 - 1.0 - 0.0588).abs() < 0.0001, "worst string 5.9 % over the mean");
+    }
+
+    #[test]
+    fn the_shares_add_up_and_equal_strings_share_equally() {
+        for n in 1..=6 {
+            let currents = shares(Amps(90.0), &vec![Ohms(0.03); n]);
+            assert!((currents.iter().copied().sum::<Amps>().0 - 90.0).abs() < 1e-9);
+            assert!(currents.iter().all(|current| (current.0 - 90.0 / n as f64).abs() < 1e-9));
+        }
+    }
+}
