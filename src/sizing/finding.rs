@@ -54,7 +54,7 @@ pub enum Finding {
     MedicalLoad { load: String, kind: LifeSupport },
     /// The volts of the bank are too low for the power.
     BusTooLow { bus: BusVolts, current: Amps, limit: Amps },
-    /// Even the highest bus volts leave too much current for one cable.
+    /// The battery current is too much for one cable: several lie in parallel.
     CurrentAboveCable { current: Amps, limit: Amps },
     /// More strings in parallel than is good practice.
     ManyStrings { strings: u32, good: u32 },
@@ -94,7 +94,7 @@ pub enum Finding {
     FaultHeatsCable { run: Run, fault: Kiloamps },
     /// The wiring code's ambient table ends below this temperature.
     AmbientOutsideTable { run: Run, ambient: Celsius, highest: Celsius },
-    /// A string's share of the current is uneven.
+    /// The strings share the current unevenly: the worst one's over the mean, above one.
     StringsUneven { worst_over_mean: f64 },
     /// Lithium must not be charged below freezing.
     LithiumInTheCold { coldest: Celsius },
@@ -110,6 +110,8 @@ pub enum Finding {
     NoAluminium { run: Run, smallest_mm2: f64 },
     /// A lithium bank's fault current does not follow from its capacity: the maker's figure is needed.
     FaultCurrentNeedsMaker { estimate: Kiloamps },
+    /// The aged bank at the end of a cut gives less than what opens the fuse within seconds.
+    FuseSlowOnAgedBank { run: Run, gives: Amps, opens_at: Amps },
     /// On battery the unit gives less than what trips the breaker at once: the unit's own shutdown must end a fault.
     BreakerSlowOnBattery { run: Run, gives: Amps, trips_at: Amps },
     /// The chosen conductor's resistance is outside what the table covers.
@@ -129,7 +131,6 @@ impl Finding {
             | ReusedInverterTooSmall { .. }
             | SquareWaveRefused { reused: true, .. }
             | SurgeTooShort { .. }
-            | CurrentAboveCable { .. }
             | TooManyStrings { .. }
             | NoMains
             | DropAboveLimit { .. }
@@ -148,6 +149,7 @@ impl Finding {
             | ChangeoverTooSlow { .. }
             | MedicalLoad { .. }
             | BusTooLow { .. }
+            | CurrentAboveCable { .. }
             | ManyStrings { .. }
             | RatingsContradict { .. }
             | TemperatureOutsideTable { .. }
@@ -164,6 +166,7 @@ impl Finding {
             | ConductorOutsideTable { .. }
             | NoAluminium { .. }
             | FaultCurrentNeedsMaker { .. }
+            | FuseSlowOnAgedBank { .. }
             | CodeLetterOpen { .. } => Severity::Warn,
             SquareWaveDisliked { .. }
             | TypicalRatings { .. }
