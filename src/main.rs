@@ -1,3 +1,5 @@
 //! The command line: arguments in, exit code out.
 
-fn main() {}
+fn main() -> std::process::ExitCode {
+    keeplit::cli::run()
+}
