@@ -3,6 +3,7 @@
 pub mod altitude;
 pub mod ambient;
 pub mod ampacity;
+pub mod appliances;
 pub mod battery_blocks;
 pub mod battery_temperature;
 pub mod charger_currents;
