@@ -23,6 +23,12 @@ const NEXT_SIZE_UP_TO: Amps = Amps(800.0);
 /// Fault current over the rating at which a C-curve breaker surely opens at once. Source (from memory): IEC 60898-1.
 pub const TRIPS_AT_ONCE: f64 = 10.0;
 
+/// Fault current over the rating at which a battery fuse surely opens within five seconds.
+///
+/// Source (from memory): the gates of IEC 60269-1 for gG fuse-links, 5 to 8 times by rating; short-time battery
+/// fuses are faster.
+pub const OPENS_WITHIN_SECONDS: f64 = 5.0;
+
 /// How a device acts on overload.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
 pub enum Kind {

@@ -1,11 +1,13 @@
 //! What the installer must hear about a run.
 
 use super::laying::Laying;
+use super::paper::Paper;
+use super::rules;
 use super::runs::{Given, Plan};
 use super::selection::{Candidate, Question};
 use crate::sizing::design::Run;
 use crate::sizing::finding::Finding;
-use crate::sizing::protection::TRIPS_AT_ONCE;
+use crate::sizing::protection::{OPENS_WITHIN_SECONDS, TRIPS_AT_ONCE};
 use crate::sizing::sheet::Sheet;
 use crate::sizing::survey::{Chemistry, Conductor};
 use crate::sizing::tables::{ambient, grouping};
@@ -20,13 +22,34 @@ impl Given<'_> {
         }
     }
 
-    /// Cable, device, laying, metal, and a fault while the mains is away.
-    pub(super) fn judge(&self, question: &Question, chosen: &Candidate, sheet: &mut Sheet) {
-        judge_cable(question, chosen, sheet);
-        judge_device(question, chosen, sheet);
-        judge_laying(question, chosen, sheet);
-        self.judge_metal(question, sheet);
-        self.judge_fault_on_battery(question, sheet);
+    /// Cable, device, laying, metal, and the weakest fault there may be.
+    pub(super) fn judge(&self, question: &Question, chosen: &Candidate, paper: &mut Paper) {
+        judge_cable(question, chosen, paper.sheet);
+        judge_device(question, chosen, paper.sheet);
+        judge_laying(question, chosen, paper.sheet);
+        self.judge_metal(question, paper.sheet);
+        self.judge_fault_on_battery(question, paper.sheet);
+        self.judge_weakest_fault(question, chosen, paper);
+    }
+
+    /// The aged bank at the end of a cut, through the whole cable, must still open the fuse.
+    fn judge_weakest_fault(&self, question: &Question, chosen: &Candidate, paper: &mut Paper) {
+        let (run, rating) = (question.plan.run, question.device.rating);
+        let (true, Some(rating)) = (run.is_dc(), rating) else { return };
+        let strings = if run == Run::StringLead { f64::from(self.bank.strings) } else { 1.0 };
+        let resistance = self.bank.aged_resistance * strings + chosen.loop_resistance;
+        let gives: Amps = self.bank.end_open_circuit / resistance;
+        let values = [
+            ("U_0", self.bank.end_open_circuit.0, "V"),
+            ("R_bank", self.bank.aged_resistance.0, "Ω"),
+            ("n", strings, ""),
+            ("R", chosen.loop_resistance.0, "Ω"),
+        ];
+        paper.line("least_fault_ka", &rules::LEAST_FAULT, &values, gives.0 / 1000.0);
+        let opens_at = rating * OPENS_WITHIN_SECONDS;
+        if gives < opens_at {
+            paper.sheet.find(Finding::FuseSlowOnAgedBank { run, gives, opens_at });
+        }
     }
 
     /// Battery leads stay of copper.

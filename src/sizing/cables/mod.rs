@@ -55,7 +55,7 @@ fn cable(plan: &Plan, given: &Given, sheet: &mut Sheet) -> Cable {
     let least_for_fault = given.least_for_fault(plan, &laying, &device, &mut paper);
     let question = Question { plan, laying: &laying, device: &device, least_for_fault };
     let chosen = question.answer().expect("every table of sizes has its largest");
-    given.judge(&question, &chosen, paper.sheet);
+    given.judge(&question, &chosen, &mut paper);
     write_down(&question, &chosen, &mut paper);
     answer(&question, &chosen, &mut paper)
 }

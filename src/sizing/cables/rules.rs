@@ -24,6 +24,15 @@ pub const LEAST_FOR_FAULT: Rule = Rule {
     checked: Checked::FromMemory,
 };
 
+pub const LEAST_FAULT: Rule = Rule {
+    symbol: "I_k,min",
+    name: "Fault current of the aged bank at the end of a cut, at the far end of the cable",
+    formula: "I_k,min = U_0 / (n · R_bank + R) / 1000, n strings where the lead of one is meant",
+    unit: "kA",
+    source: "Ohm's law; equation as in a valve-regulated battery maker's conference paper",
+    checked: Checked::Read,
+};
+
 pub const SIZE: Rule = Rule {
     symbol: "S",
     name: "Cross-section of a conductor",
@@ -36,7 +45,7 @@ pub const SIZE: Rule = Rule {
 pub const PARALLEL: Rule = Rule {
     symbol: "n",
     name: "Conductors in parallel per pole",
-    formula: "more than one only where the thickest does not do",
+    formula: "more than one where the thickest does not do, or one would carry more than I_most",
     unit: "",
     source: "our choice",
     checked: Checked::OurRule,

@@ -56,6 +56,8 @@ pub struct Plan {
     pub fault: Kiloamps,
     /// What it may lose.
     pub drop: DropBounds,
+    /// What one conductor may carry, where there is a bound besides its capacity.
+    pub per_conductor: Option<Amps>,
 }
 
 impl Given<'_> {
@@ -119,17 +121,19 @@ impl Given<'_> {
         let mean = Amps(1.0);
         let worst = shares(mean * f64::from(self.bank.strings), &resistances)[0];
         let values = [("n", f64::from(self.bank.strings), ""), ("s", spread, "")];
-        let worst_over_mean = paper.line("imbalance", &IMBALANCE, &values, worst / mean - 1.0);
-        if worst_over_mean > UNEVEN_ABOVE {
-            paper.sheet.find(Finding::StringsUneven { worst_over_mean });
+        let excess = paper.line("imbalance", &IMBALANCE, &values, worst / mean - 1.0);
+        if excess > UNEVEN_ABOVE {
+            paper.sheet.find(Finding::StringsUneven { worst_over_mean: 1.0 + excess });
         }
-        worst_over_mean
+        excess
     }
 
     fn battery_plan(&self, run: Run, length: Metres, current: Amps, fault: Kiloamps) -> Plan {
         let &Assumptions { dc_drop_target: target, dc_drop_warn: warn, dc_drop_limit: limit, .. } = self.assumptions;
         let drop = DropBounds { target, warn, limit };
-        Plan { run, length, current, nominal: self.bank.bus.volts().0, power_factor: Fraction::ONE, fault, drop }
+        let nominal = self.bank.bus.volts().0;
+        let per_conductor = Some(Amps(self.assumptions.bus_current_limit_a));
+        Plan { run, length, current, nominal, power_factor: Fraction::ONE, fault, drop, per_conductor }
     }
 
     /// Most that the bank gives into a bolted fault.
@@ -180,7 +184,8 @@ impl Given<'_> {
 
     fn supply_plan(&self, run: Run, length: Metres, current: Amps, power_factor: Fraction, fault: Kiloamps) -> Plan {
         let nominal = self.survey.site.supply.0;
-        Plan { run, length, current, nominal, power_factor, fault, drop: self.supply_drop(length) }
+        let drop = self.supply_drop(length);
+        Plan { run, length, current, nominal, power_factor, fault, drop, per_conductor: None }
     }
 
     /// The allowed drop runs from the mains to the board, so both runs share it by their lengths.

@@ -81,7 +81,16 @@ impl Question<'_> {
     /// Whether it carries the current and the device protects it; where the trade has no device, whether it would
     /// carry what the device had to.
     pub fn carries(&self, one: &Candidate) -> bool {
-        one.capacity >= self.plan.current && self.terminals_carry(one) && self.is_protected(one)
+        one.capacity >= self.plan.current
+            && self.shares_well(one)
+            && self.terminals_carry(one)
+            && self.is_protected(one)
+    }
+
+    /// No conductor carries more than one cable should.
+    fn shares_well(&self, one: &Candidate) -> bool {
+        let share = self.plan.current / f64::from(one.parallel);
+        self.plan.per_conductor.is_none_or(|most| share <= most)
     }
 
     /// NEC 210.19, 215.2: before any correction the conductor carries 125 % of what flows all day.

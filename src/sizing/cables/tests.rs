@@ -38,6 +38,7 @@ impl Case {
     fn drawn_at(amps: f64) -> Self {
         let mut case = Self::shop();
         case.bank.peak_current = Amps(amps);
+        case.bank.aged_resistance = crate::units::Ohms(0.001);
         case
     }
 
@@ -166,7 +167,7 @@ fn strings_that_differ_much_are_told() {
     let mut case = Case::shop();
     case.bank.strings = 3;
     case.assumptions.string_resistance_spread = 0.2;
-    let worst_over_mean = 3.0 / (1.0 + 2.0 * 0.8) - 1.0;
+    let worst_over_mean = 3.0 / (1.0 + 2.0 * 0.8);
     let told = case.findings().into_iter().find_map(|finding| match finding {
         Finding::StringsUneven { worst_over_mean } => Some(worst_over_mean),
         _ => None,
@@ -202,6 +203,28 @@ fn the_nec_asks_a_quarter_more_of_device_and_terminals() {
     // terminals but is capped at 20 A, so 10 AWG; its ground by 250.122 is 10 AWG.
     assert_eq!((cable.size, cable.fuse), (Some(CrossSection::Awg("10")), Some(Amps(25.0))));
     assert_eq!((cable.protective_conductor, cable.code), (Some(CrossSection::Awg("10")), "NEC"));
+}
+
+#[test]
+fn no_conductor_at_the_battery_carries_more_than_one_cable_should() {
+    for (amps, parallel) in [(149.0, 1), (151.0, 2), (299.0, 2), (320.0, 3)] {
+        let cable = Case::drawn_at(amps).cable(Run::BankToInverter);
+        assert_eq!(cable.parallel, parallel, "{amps} A at 150 A to a cable");
+    }
+}
+
+#[test]
+fn an_aged_bank_too_weak_to_open_its_fuse_is_told() {
+    let mut case = Case::drawn_at(100.0);
+    case.bank.aged_resistance = crate::units::Ohms(0.020);
+    let cable = case.cable(Run::BankToInverter);
+    let gives: Amps = case.bank.end_open_circuit / (case.bank.aged_resistance + cable.loop_resistance);
+    let opens_at = cable.fuse.expect("a fuse fits") * 5.0;
+    assert!(gives < opens_at);
+    let told = Finding::FuseSlowOnAgedBank { run: Run::BankToInverter, gives, opens_at };
+    assert!(case.findings().contains(&told), "{:?}", case.findings());
+    case.bank.aged_resistance = crate::units::Ohms(0.005);
+    assert!(!case.findings().iter().any(|finding| matches!(finding, Finding::FuseSlowOnAgedBank { .. })));
 }
 
 #[test]

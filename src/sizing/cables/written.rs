@@ -23,15 +23,18 @@ pub(super) fn write_down(question: &Question, chosen: &Candidate, paper: &mut Pa
 }
 
 fn write_size(question: &Question, chosen: &Candidate, paper: &mut Paper) {
+    let plan = question.plan;
     let values = [
-        ("I_b", question.plan.current.0, "A"),
+        ("I_b", plan.current.0, "A"),
         ("S_fault", question.least_for_fault.0, "mm²"),
-        ("u_target", question.plan.drop.target, ""),
+        ("u_target", plan.drop.target, ""),
     ];
     if let CrossSection::Metric(area) = chosen.size.cross_section {
         paper.line("cross_section_mm2", &rules::SIZE, &values, area.0);
     }
-    paper.line("parallel", &rules::PARALLEL, &[("I_b", question.plan.current.0, "A")], f64::from(chosen.parallel));
+    let values = [("I_b", plan.current.0, "A"), ("I_most", plan.per_conductor.map_or(0.0, |most| most.0), "A")];
+    let given = if plan.per_conductor.is_some() { &values[..] } else { &values[..1] };
+    paper.line("parallel", &rules::PARALLEL, given, f64::from(chosen.parallel));
 }
 
 fn write_capacity(question: &Question, chosen: &Candidate, paper: &mut Paper) {

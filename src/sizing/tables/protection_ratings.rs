@@ -66,32 +66,32 @@ impl BatteryFuse {
 /// 20 kA at 125 V, read in one summary; the marking on the part decides.
 pub const BATTERY_FUSES: [BatteryFuse; 6] = [
     BatteryFuse {
-        name: "ISO 8820-5 SF30 bolt-down fuse, 32 V DC, at the battery post",
+        name: "ISO 8820-5 SF30 bolt-down fuse, 32 V DC, at the battery end",
         ratings: SF30_FUSES,
         breaks: &[(DcVolts(32.0), Kiloamps(2.0))],
     },
     BatteryFuse {
-        name: "ISO 8820-5 SF51 bolt-down fuse, 32 V DC, at the battery post",
+        name: "ISO 8820-5 SF51 bolt-down fuse, 32 V DC, at the battery end",
         ratings: SF51_FUSES,
         breaks: &[(DcVolts(32.0), Kiloamps(2.0))],
     },
     BatteryFuse {
-        name: "terminal fuse on the battery post, 58 V DC",
+        name: "terminal fuse, 58 V DC, at the battery end",
         ratings: POST_FUSES,
         breaks: &[(DcVolts(14.0), Kiloamps(10.0)), (DcVolts(32.0), Kiloamps(5.0)), (DcVolts(58.0), Kiloamps(2.0))],
     },
     BatteryFuse {
-        name: "ANL strip fuse, 32 V DC, at the battery post",
+        name: "ANL strip fuse, 32 V DC, at the battery end",
         ratings: ANL_FUSES,
         breaks: &[(DcVolts(32.0), Kiloamps(6.0))],
     },
     BatteryFuse {
-        name: "class T fuse, 125 V DC, at the battery post",
+        name: "class T fuse, 125 V DC, at the battery end",
         ratings: CLASS_T_FUSES,
         breaks: &[(DcVolts(125.0), Kiloamps(20.0))],
     },
     BatteryFuse {
-        name: "NH battery fuse (IEC 60269-7), 80 V DC or more, at the battery post",
+        name: "NH battery fuse (IEC 60269-7), 80 V DC or more, at the battery end",
         ratings: NH_FUSES,
         breaks: &[(DcVolts(80.0), Kiloamps(25.0))],
     },
