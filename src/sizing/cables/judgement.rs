@@ -2,7 +2,6 @@
 
 use super::laying::Laying;
 use super::paper::Paper;
-use super::rules;
 use super::runs::{Given, Plan};
 use super::selection::{Candidate, Question};
 use crate::sizing::design::Run;
@@ -34,18 +33,9 @@ impl Given<'_> {
 
     /// The aged bank at the end of a cut, through the whole cable, must still open the fuse.
     fn judge_weakest_fault(&self, question: &Question, chosen: &Candidate, paper: &mut Paper) {
-        let (run, rating) = (question.plan.run, question.device.rating);
-        let (true, Some(rating)) = (run.is_dc(), rating) else { return };
-        let strings = if run == Run::StringLead { f64::from(self.bank.strings) } else { 1.0 };
-        let resistance = self.bank.aged_resistance * strings + chosen.loop_resistance;
-        let gives: Amps = self.bank.end_open_circuit / resistance;
-        let values = [
-            ("U_0", self.bank.end_open_circuit.0, "V"),
-            ("R_bank", self.bank.aged_resistance.0, "Ω"),
-            ("n", strings, ""),
-            ("R", chosen.loop_resistance.0, "Ω"),
-        ];
-        paper.line("least_fault_ka", &rules::LEAST_FAULT, &values, gives.0 / 1000.0);
+        let run = question.plan.run;
+        let (true, Some(rating)) = (run.is_dc(), question.device.rating) else { return };
+        let gives = self.weakest_fault(chosen.loop_resistance, paper);
         let opens_at = rating * OPENS_WITHIN_SECONDS;
         if gives < opens_at {
             paper.sheet.find(Finding::FuseSlowOnAgedBank { run, gives, opens_at });

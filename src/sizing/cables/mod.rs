@@ -4,6 +4,7 @@
 //! that the device protects, that bears a fault until it is cleared, and that keeps the drop. Resistances
 //! are the standards' highest, at the temperature the insulation bears.
 
+mod fault_current;
 mod judgement;
 pub mod laying;
 mod paper;
@@ -11,6 +12,7 @@ pub mod protective_conductor;
 mod rules;
 pub mod runs;
 pub mod selection;
+pub mod sharing;
 pub mod short_circuit;
 pub mod voltage_drop;
 mod written;

@@ -24,15 +24,6 @@ pub const LEAST_FOR_FAULT: Rule = Rule {
     checked: Checked::FromMemory,
 };
 
-pub const LEAST_FAULT: Rule = Rule {
-    symbol: "I_k,min",
-    name: "Fault current of the aged bank at the end of a cut, at the far end of the cable",
-    formula: "I_k,min = U_0 / (n · R_bank + R) / 1000, n strings where the lead of one is meant",
-    unit: "kA",
-    source: "Ohm's law; equation as in a valve-regulated battery maker's conference paper",
-    checked: Checked::Read,
-};
-
 pub const SIZE: Rule = Rule {
     symbol: "S",
     name: "Cross-section of a conductor",

@@ -3,13 +3,9 @@
 use super::paper::Paper;
 use crate::sizing::assumptions::Assumptions;
 use crate::sizing::design::{Bank, Charger, Demand, Inverter, Run};
-use crate::sizing::finding::Finding;
 use crate::sizing::sheet::{Checked, Rule, Sheet};
 use crate::sizing::survey::Survey;
-use crate::units::{Amps, Fraction, Kiloamps, Metres, Ohms, Watts};
-
-/// A string's share above the mean by more than this is told: our rule.
-const UNEVEN_ABOVE: f64 = 0.05;
+use crate::units::{Amps, Fraction, Kiloamps, Metres, Watts};
 
 /// What the stages before have settled.
 #[derive(Clone, Copy)]
@@ -112,43 +108,12 @@ impl Given<'_> {
         self.battery_plan(Run::StringLead, self.survey.runs.string_lead, current, fault)
     }
 
-    /// How far the worst string's current is above the mean, when its resistance is below the others' by the
-    /// spread. The leads, of equal length, would even this out a little; that is not counted on.
-    fn imbalance(&self, paper: &mut Paper) -> f64 {
-        let spread = self.assumptions.string_resistance_spread;
-        let mut resistances = vec![Ohms(1.0); self.bank.strings as usize];
-        resistances[0] = Ohms(1.0 - spread);
-        let mean = Amps(1.0);
-        let worst = shares(mean * f64::from(self.bank.strings), &resistances)[0];
-        let values = [("n", f64::from(self.bank.strings), ""), ("s", spread, "")];
-        let excess = paper.line("imbalance", &IMBALANCE, &values, worst / mean - 1.0);
-        if excess > UNEVEN_ABOVE {
-            paper.sheet.find(Finding::StringsUneven { worst_over_mean: 1.0 + excess });
-        }
-        excess
-    }
-
     fn battery_plan(&self, run: Run, length: Metres, current: Amps, fault: Kiloamps) -> Plan {
         let &Assumptions { dc_drop_target: target, dc_drop_warn: warn, dc_drop_limit: limit, .. } = self.assumptions;
         let drop = DropBounds { target, warn, limit };
         let nominal = self.bank.bus.volts().0;
         let per_conductor = Some(Amps(self.assumptions.bus_current_limit_a));
         Plan { run, length, current, nominal, power_factor: Fraction::ONE, fault, drop, per_conductor }
-    }
-
-    /// Most that the bank gives into a bolted fault.
-    fn bank_fault(&self, paper: &mut Paper) -> Kiloamps {
-        let per_ah = self.assumptions.fault_current_per_ah;
-        let values = [("k", per_ah, "A/Ah"), ("C", self.bank.installed.0, "Ah")];
-        Kiloamps(paper.line("fault_current_ka", &BANK_FAULT, &values, per_ah * self.bank.installed.0 / 1000.0))
-    }
-
-    /// Most that the other strings give into a fault of this one.
-    fn string_fault(&self, strings: f64, paper: &mut Paper) -> Kiloamps {
-        let per_ah = self.assumptions.fault_current_per_ah;
-        let values = [("k", per_ah, "A/Ah"), ("C", self.bank.installed.0, "Ah"), ("n", strings, "")];
-        let fault = per_ah * self.bank.installed.0 * (strings - 1.0) / strings / 1000.0;
-        Kiloamps(paper.line("fault_current_ka", &STRING_FAULT, &values, fault))
     }
 
     /// The board's cable carries what the unit can give, not only what is on the list today.
@@ -196,20 +161,6 @@ impl Given<'_> {
         let target = limit * if both > Metres::ZERO { length / both } else { 1.0 };
         DropBounds { target, warn: target, limit }
     }
-
-    /// Through the unit's bypass the board sees the fault current of the mains.
-    fn mains_fault(&self, paper: &mut Paper) -> Kiloamps {
-        let fault = self.assumptions.supply_fault_current_ka;
-        Kiloamps(paper.line("fault_current_ka", &MAINS_FAULT, &[("I_k", fault, "kA")], fault))
-    }
-}
-
-/// Currents of parallel strings of equal volts: `I_i = I · (1/R_i) / Σ(1/R_j)`.
-///
-/// Resistances must be above zero. Source: Kirchhoff's laws.
-pub fn shares(whole: Amps, resistances: &[Ohms]) -> Vec<Amps> {
-    let conductance: f64 = resistances.iter().map(|resistance| 1.0 / resistance.0).sum();
-    resistances.iter().map(|resistance| whole / (resistance.0 * conductance)).collect()
 }
 
 /// A ratio as a share of one; the whole where there is nothing to share.
@@ -242,58 +193,3 @@ const BOARD_CURRENT: Rule = Rule {
 };
 
 const MAINS_CURRENT: Rule = Rule { formula: "I_b = I_mains", source: "load and charger together", ..BANK_CURRENT };
-
-const IMBALANCE: Rule = Rule {
-    symbol: "u",
-    name: "Worst string's current over the mean, less one",
-    formula: "u = n / (1 + (n − 1) · (1 − s)) − 1",
-    unit: "",
-    source: "Kirchhoff's laws, one string lower in resistance by s than the others",
-    checked: Checked::Derived,
-};
-
-const BANK_FAULT: Rule = Rule {
-    symbol: "I_k",
-    name: "Largest fault current",
-    formula: "I_k = k · C / 1000",
-    unit: "kA",
-    source: "a switchgear maker's note on DC distribution: near 10 A/Ah, always under 20; not for lithium",
-    checked: Checked::Read,
-};
-
-const STRING_FAULT: Rule = Rule {
-    formula: "I_k = k · C · (n − 1) / n / 1000",
-    source: "the other strings feed the fault of this one; k by a switchgear maker's note on DC distribution",
-    ..BANK_FAULT
-};
-
-const MAINS_FAULT: Rule = Rule {
-    formula: "I_k as assumed for the mains, which the unit's bypass lets through",
-    source: "ask the distributor",
-    checked: Checked::CommonPractice,
-    ..BANK_FAULT
-};
-
-#[cfg(test)]
-mod tests {
-    use super::*;
-
-    #[test]
-    fn strings_share_the_current_by_their_conductances() {
-        // Our own vector: 20, 20 and 24 mΩ at 120 A.
-        let currents = shares(Amps(120.0), &[Ohms(0.020), Ohms(0.020), Ohms(0.024)]);
-        for (current, expected) in currents.iter().zip([42.353, 42.353, 35.294]) {
-            assert!((current.0 - expected).abs() < 0.001, "{currents:?}");
-        }
-        assert!((currents[0].0 / 40.0 - 1.0 - 0.0588).abs() < 0.0001, "worst string 5.9 % over the mean");
-    }
-
-    #[test]
-    fn the_shares_add_up_and_equal_strings_share_equally() {
-        for n in 1..=6 {
-            let currents = shares(Amps(90.0), &vec![Ohms(0.03); n]);
-            assert!((currents.iter().copied().sum::<Amps>().0 - 90.0).abs() < 1e-9);
-            assert!(currents.iter().all(|current| (current.0 - 90.0 / n as f64).abs() < 1e-9));
-        }
-    }
-}
