@@ -188,7 +188,7 @@ fn of_bank(finding: &Finding) -> Option<Parts> {
         CurrentAboveCable { current, limit } => (
             "battery_current_too_high",
             format!("The battery current is {}, above the {} that one cable may carry.", current.told(), limit.told()),
-            "Take higher bank volts, or split the site onto two units.",
+            "Lay the cables in parallel as listed, all of one length; or take higher bank volts, or two units.",
         ),
         ManyStrings { strings, good } => (
             "many_strings",
@@ -357,11 +357,11 @@ fn of_cables(finding: &Finding) -> Option<Parts> {
         NoAluminium { run: of, smallest_mm2 } => (
             "no_aluminium",
             format!(
-                "Cable {}: aluminium is not made for it below {}; copper was taken.",
+                "Cable {}: aluminium is not made as a flexible battery lead, and for fixed cables not below {}; copper was taken.",
                 run(*of),
                 Numbers::default().with_unit(*smallest_mm2, "mm²")
             ),
-            "Use copper here, with joints made for both metals.",
+            "Use flexible copper here, with lugs made for it.",
         ),
         ConductorOutsideTable { run: of, resistance } => (
             "conductor_outside_table",
@@ -375,6 +375,16 @@ fn of_cables(finding: &Finding) -> Option<Parts> {
                 estimate.told()
             ),
             "Ask the maker for the prospective fault current before choosing the fuse.",
+        ),
+        FuseSlowOnAgedBank { run: of, gives, opens_at } => (
+            "fuse_slow_on_aged_bank",
+            format!(
+                "Cable {}: an aged bank gives a fault {}, less than the {} that opens the fuse within seconds.",
+                run(*of),
+                gives.told(),
+                opens_at.told()
+            ),
+            "Shorten the run or take a larger cable; replace the bank before it is worn out.",
         ),
         BreakerSlowOnBattery { run: of, gives, trips_at } => (
             "breaker_slow_on_battery",
