@@ -393,7 +393,7 @@ pub struct Cable {
     /// Current the run is designed for.
     #[serde(rename = "design_current_a")]
     pub design_current: Amps,
-    /// Size of one conductor; absent when nothing in the table fits.
+    /// Size of one conductor; the largest of the table where nothing fits, which a finding says.
     #[serde(flatten)]
     pub size: Option<CrossSection>,
     /// Conductors in parallel per pole.
