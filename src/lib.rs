@@ -3,10 +3,16 @@
 //! In reading order: units, the engine, the records, their text, the store, the pages, the command
 //! line. `DEVELOPERS.md` holds the map.
 
+pub mod accounts;
 pub mod cli;
 pub mod documents;
+pub mod jobs;
+pub mod keys;
+pub mod money;
 pub mod qr;
+pub mod quotes;
 pub mod sizing;
+pub mod store;
 pub mod translations;
 pub mod units;
 pub mod wording;
