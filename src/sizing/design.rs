@@ -6,8 +6,9 @@ use serde::Serialize;
 
 use super::assumptions::Assumptions;
 use super::finding::Finding;
+use super::load_survey::Power;
 use super::sheet::Line;
-use super::survey::{BusVolts, TimeOfDay};
+use super::survey::{BusVolts, StartKind, TimeOfDay};
 use crate::units::{
     AcVolts, AmpHours, Amps, Celsius, CubicMetresPerHour, DcVolts, Fraction, Hours, Kiloamps, Kilograms, Metres,
     Millimetres, Milliseconds, Ohms, Seconds, SquareCentimetres, SquareMillimetres, VoltAmps, WattHours, Watts, Years,
@@ -75,22 +76,37 @@ pub struct Demand {
     pub average_outage: WattHours,
     /// The day in stretches of constant load, from midnight to midnight.
     pub day: Vec<DayStretch>,
-    /// The hardest start of each motor.
+    /// The hardest start of each load that has one, in the order of the survey.
     #[serde(skip)]
     pub starts: Vec<StartNeed>,
 }
 
-/// What one motor asks for when it starts at its hardest hour, the rest running.
+/// What one load asks for when it starts at its hardest hour, the rest running.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub struct StartNeed {
     /// Its row in the survey.
     pub row: usize,
-    /// The motor's own start.
-    pub start: VoltAmps,
+    /// What starts.
+    pub kind: StartKind,
+    /// How long the start lasts.
+    pub lasts: Seconds,
+    /// What runs beside it.
+    pub rest: Power,
+    /// The start alone.
+    pub start: Power,
+}
+
+impl StartNeed {
     /// The start with the rest running.
-    pub needed: VoltAmps,
-    /// The real power of that.
-    pub needed_w: Watts,
+    pub fn needed(&self) -> Power {
+        self.rest + self.start
+    }
+
+    /// Whether it is a surge, short enough for the unit's surge rating by its nature: a cold heater is
+    /// a long overload instead.
+    pub fn is_surge(&self) -> bool {
+        self.kind != StartKind::HeaterPtc
+    }
 }
 
 /// A stretch of the day in which nothing changes.

@@ -6,17 +6,20 @@ use super::finding::Finding;
 use super::load_survey::Power;
 use super::sheet::{Checked, Rule, Sheet};
 use super::survey::{Load, MotorPlate, Site, StartKind, Survey};
-use super::tables::motors::{CODE_LETTERS, LOCKED_OVER_FULL_LOAD, SINGLE_PHASE};
+use super::tables::motors;
 use crate::units::{DcVolts, Fraction, Ohms, VoltAmps, Watts};
+
+#[cfg(test)]
+mod tests;
 
 /// What one piece of a load draws while it starts; `None` where that is no more than running.
 ///
-/// Heaters and lamps that are warm within a few half cycles load the unit by their running power;
-/// the charging pulse of capacitors is shorter than half a cycle and counts for no one's seconds.
+/// A filament has no start here: a unit that limits its current only warms it more slowly. The charging
+/// pulse of a capacitor is shorter than half a cycle and does not belong into the multiple.
 pub fn start_power(load: &Load, site: &Site, assumptions: &Assumptions) -> Option<Power> {
     let apparent = start_apparent(load, site);
     match load.start {
-        StartKind::Resistive | StartKind::HeaterPtc => None,
+        StartKind::Resistive => None,
         _ if apparent <= load.running.apparent(load.power_factor) => None,
         kind if kind.is_motor() => {
             let power_factor = Fraction::new(assumptions.start_power_factor).unwrap_or(Fraction::ONE);
@@ -28,40 +31,18 @@ pub fn start_power(load: &Load, site: &Site, assumptions: &Assumptions) -> Optio
 
 /// Apparent power of one start: from the plate where it says something, else the multiple of running VA.
 fn start_apparent(load: &Load, site: &Site) -> VoltAmps {
-    match load.motor_plate {
+    match load.motor_plate.filter(|_| load.start.is_motor()) {
         Some(MotorPlate::LockedRotor(current)) => site.supply * current,
-        Some(MotorPlate::CodeLetter { horsepower, letter }) => code_letter(horsepower, letter),
-        Some(MotorPlate::Horsepower(horsepower)) => table_start(horsepower),
-        None => load.running.apparent(load.power_factor) * load.surge_multiple,
+        Some(MotorPlate::CodeLetter { horsepower, letter }) => motors::code_letter_start(horsepower, letter),
+        Some(MotorPlate::Horsepower(horsepower)) => motors::table_start(horsepower, site.supply),
+        None => Power::of_one(load).apparent() * load.surge_multiple,
     }
-}
-
-/// Locked-rotor VA from a plate's code letter: `hp × kVA/hp × 1000`, the top of the letter's band.
-///
-/// Letter V has no top; its lowest value is taken and a finding says so.
-///
-/// Source: NEC 430.7(B).
-pub fn code_letter(horsepower: f64, letter: char) -> VoltAmps {
-    let row = CODE_LETTERS.iter().find(|row| row.0 == letter.to_ascii_uppercase());
-    let &(_, lowest, highest) = row.unwrap_or(&CODE_LETTERS[CODE_LETTERS.len() - 1]);
-    VoltAmps(horsepower * highest.unwrap_or(lowest) * 1000.0)
-}
-
-/// Locked-rotor VA of a single-phase motor from the code's table: 230 V times the current of the
-/// next size up; above the table in proportion to the power.
-///
-/// Source: NEC 430.248 and 430.251(A); below 1/2 hp six times full load, the ratio of the whole table.
-pub fn table_start(horsepower: f64) -> VoltAmps {
-    let last = SINGLE_PHASE[SINGLE_PHASE.len() - 1];
-    let (size, full_load, locked) = *SINGLE_PHASE.iter().find(|row| horsepower <= row.0 + 1e-9).unwrap_or(&last);
-    let current = locked.map_or(full_load[1] * LOCKED_OVER_FULL_LOAD, |locked| locked[1]);
-    VoltAmps(230.0 * current * (horsepower / size).max(1.0))
 }
 
 const NEEDED: Rule = Rule {
     symbol: "S_start",
     name: "Start of this motor, the rest running",
-    formula: "S_start = |Σ running − running_i + starting_i|",
+    formula: "S_start = |rest running + start|, P, Q and D apart",
     unit: "VA",
     source: "NEC 430.7(B), 430.251(A) where the plate says so; else the multiple of the running VA",
     checked: Checked::Read,
@@ -70,9 +51,9 @@ const NEEDED: Rule = Rule {
 const AVAILABLE: Rule = Rule {
     symbol: "S_surge",
     name: "Surge that the unit gives",
-    formula: "S_surge = rating × surge multiple",
+    formula: "S_surge as of the unit",
     unit: "VA",
-    source: "rating of the unit",
+    source: "surge of the unit, above",
     checked: Checked::Derived,
 };
 
@@ -84,6 +65,16 @@ const LOWEST: Rule = Rule {
     source: "Ohm's law for a constant-power load behind the resistance of bank and cable",
     checked: Checked::Derived,
 };
+
+/// The unit with its bank and cable, as a start meets them.
+struct Supply<'a> {
+    inverter: &'a Inverter,
+    bank: &'a Bank,
+    /// Aged bank and both conductors of its cable.
+    resistance: Ohms,
+    /// Share of the starting current below which a motor stays where it is.
+    marginal: f64,
+}
 
 /// Whether each motor starts: on the unit's surge and its seconds, and on the sag of bank and cable.
 pub fn starts(
@@ -98,15 +89,9 @@ pub fn starts(
     warn_of_restart(demand, inverter, sheet);
     let cable = cables.iter().find(|cable| cable.run == Run::BankToInverter);
     let resistance = bank.aged_resistance + cable.map_or(Ohms::ZERO, |cable| cable.loop_resistance);
-    let start = |need: &StartNeed| {
-        let load = &survey.loads[need.row];
-        let lowest = lowest_volts(bank, inverter.losses.drawn(need.needed_w), resistance);
-        let verdict = verdict(load, need, inverter, assumptions, sheet);
-        write_down(&load.name, need, inverter, lowest, bank, resistance, sheet);
-        let verdict = if lowest < bank.cut_off { sags(&load.name, lowest, bank, sheet) } else { verdict };
-        MotorStart { load: load.name.clone(), needed: need.needed, available: inverter.surge, lowest, verdict }
-    };
-    demand.starts.iter().map(start).collect()
+    let supply = Supply { inverter, bank, resistance, marginal: assumptions.start_marginal_share };
+    let motors = demand.starts.iter().filter(|need| need.kind.is_motor());
+    motors.map(|need| supply.start(need, &survey.loads[need.row].name, sheet)).collect()
 }
 
 /// All at once is more than the unit gives, one after the other is not.
@@ -117,60 +102,55 @@ fn warn_of_restart(demand: &Demand, inverter: &Inverter, sheet: &mut Sheet) {
     }
 }
 
-/// Volts left at the unit while a power is drawn; where no current can deliver it, the volts at the
-/// greatest power that bank and cable can give.
-fn lowest_volts(bank: &Bank, power: Watts, resistance: Ohms) -> DcVolts {
-    let open = bank.end_open_circuit.0;
-    let root = (open * open - 4.0 * resistance.0 * power.0).max(0.0).sqrt();
-    DcVolts((open + root) / 2.0)
-}
+impl Supply<'_> {
+    fn start(&self, need: &StartNeed, name: &str, sheet: &mut Sheet) -> MotorStart {
+        let figure = |key: &str| format!("starts.{name}.{key}");
+        let (needed, available) = (need.needed().apparent(), self.inverter.surge);
+        let values = [("rest", need.rest.apparent().0, "VA"), ("start", need.start.apparent().0, "VA")];
+        sheet.line(figure("needed_va"), &NEEDED, &values, needed.0);
+        sheet.line(figure("available_va"), &AVAILABLE, &[("S_surge", available.0, "VA")], available.0);
+        let drawn = self.inverter.losses.drawn(need.needed().real);
+        let values =
+            [("V_oc", self.bank.end_open_circuit.0, "V"), ("R", self.resistance.0, "Ω"), ("P_dc", drawn.0, "W")];
+        let lowest = DcVolts(sheet.line(figure("lowest_v"), &LOWEST, &values, self.lowest(drawn).0));
+        let verdict = self.on_the_unit(need, name, sheet).max(self.on_the_bank(lowest, name, sheet));
+        MotorStart { load: name.to_owned(), needed, available, lowest, verdict }
+    }
 
-fn verdict(
-    load: &Load,
-    need: &StartNeed,
-    inverter: &Inverter,
-    assumptions: &Assumptions,
-    sheet: &mut Sheet,
-) -> StartVerdict {
-    let (name, needed, available) = (load.name.clone(), need.needed, inverter.surge);
-    let left = available - (needed - need.start);
-    if needed > inverter.rating && load.surge_lasts > inverter.surge_held {
-        sheet.find(Finding::SurgeTooShort { load: name, lasts: load.surge_lasts, held: inverter.surge_held });
-        StartVerdict::WillNotStart
-    } else if needed <= available {
-        StartVerdict::Starts
-    } else if left / need.start >= assumptions.start_marginal_share {
-        sheet.find(Finding::MotorStartMarginal { load: name, needed, available });
-        StartVerdict::Marginal
-    } else {
-        sheet.find(Finding::MotorWillNotStart { load: name, needed, available });
+    /// Volts left at the unit while a power is drawn; where no current can deliver it, the volts at the
+    /// greatest power that bank and cable can give, which is half of what the bank shows unloaded.
+    fn lowest(&self, power: Watts) -> DcVolts {
+        let open = self.bank.end_open_circuit.0;
+        let root = (open * open - 4.0 * self.resistance.0 * power.0).max(0.0).sqrt();
+        DcVolts((open + root) / 2.0)
+    }
+
+    fn on_the_bank(&self, lowest: DcVolts, name: &str, sheet: &mut Sheet) -> StartVerdict {
+        let cut_off = self.bank.cut_off;
+        if lowest >= cut_off {
+            return StartVerdict::Starts;
+        }
+        sheet.find(Finding::BankSagsAtStart { load: name.to_owned(), lowest, cut_off });
         StartVerdict::WillNotStart
     }
-}
 
-fn sags(name: &str, lowest: DcVolts, bank: &Bank, sheet: &mut Sheet) -> StartVerdict {
-    sheet.find(Finding::BankSagsAtStart { load: name.to_owned(), lowest, cut_off: bank.cut_off });
-    StartVerdict::WillNotStart
-}
-
-fn write_down(
-    name: &str,
-    need: &StartNeed,
-    inverter: &Inverter,
-    lowest: DcVolts,
-    bank: &Bank,
-    resistance: Ohms,
-    sheet: &mut Sheet,
-) {
-    let starting = [("starting_i", need.start.0, "VA")];
-    sheet.line(format!("starts.{name}.needed_va"), &NEEDED, &starting, need.needed.0);
-    sheet.line(
-        format!("starts.{name}.available_va"),
-        &AVAILABLE,
-        &[("rating", inverter.rating.0, "VA")],
-        inverter.surge.0,
-    );
-    let drawn = inverter.losses.drawn(need.needed_w);
-    let sag = [("V_oc", bank.end_open_circuit.0, "V"), ("R", resistance.0, "Ω"), ("P_dc", drawn.0, "W")];
-    sheet.line(format!("starts.{name}.lowest_v"), &LOWEST, &sag, lowest.0);
+    /// A current limit pulls the volts down and the torque with their square: a motor that gets most
+    /// of its current may still start, one that gets less does not.
+    fn on_the_unit(&self, need: &StartNeed, name: &str, sheet: &mut Sheet) -> StartVerdict {
+        let load = name.to_owned();
+        let (needed, available) = (need.needed().apparent(), self.inverter.surge);
+        let held = self.inverter.surge_held;
+        if need.lasts > held && needed > self.inverter.rating * self.inverter.derating {
+            sheet.find(Finding::SurgeTooShort { load, lasts: need.lasts, held });
+            StartVerdict::WillNotStart
+        } else if needed <= available {
+            StartVerdict::Starts
+        } else if (need.rest + need.start * self.marginal).apparent() <= available {
+            sheet.find(Finding::MotorStartMarginal { load, needed, available });
+            StartVerdict::Marginal
+        } else {
+            sheet.find(Finding::MotorWillNotStart { load, needed, available });
+            StartVerdict::WillNotStart
+        }
+    }
 }

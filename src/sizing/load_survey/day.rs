@@ -2,31 +2,33 @@
 
 use super::items::Item;
 use super::power::Power;
+use super::turns::Turns;
+use crate::sizing::design::{DayStretch, StartNeed};
 use crate::sizing::survey::{TimeOfDay, Window};
 use crate::units::{VoltAmps, Watts};
 
 /// What a stretch of the day asks for.
-pub struct Stretch<'a> {
-    /// The lines that may be on.
-    active: Vec<&'a Item<'a>>,
-    /// What each group that takes turns counts for.
-    turns: Turns,
+pub struct Stretch {
     /// Beginning.
     pub from: TimeOfDay,
     /// End, not included.
     pub to: TimeOfDay,
     /// Average real power.
     pub average: Watts,
-    /// Everything running that may be on together.
+    /// Highest real power running together.
+    pub real: Watts,
+    /// Highest apparent power running together, in its parts.
     pub running: Power,
-    /// Everything that has a start starting at once, the rest running.
-    pub together: VoltAmps,
-    /// The worst single start, the rest running.
+    /// The worst single start, the rest running; running where nothing starts harder.
     pub staggered: VoltAmps,
+    /// Every motor starting at once, the rest running.
+    pub together: VoltAmps,
+    /// Each line's start at this hour, one piece at a time, the rest running.
+    pub starts: Vec<StartNeed>,
 }
 
 /// The day from midnight to midnight, cut wherever a window begins or ends.
-pub fn stretches<'a>(items: &'a [Item<'a>]) -> Vec<Stretch<'a>> {
+pub fn stretches(items: &[Item]) -> Vec<Stretch> {
     boundaries(items).windows(2).map(|pair| stretch(items, pair[0], pair[1])).collect()
 }
 
@@ -39,81 +41,75 @@ fn boundaries(items: &[Item]) -> Vec<TimeOfDay> {
     times
 }
 
-fn stretch<'a>(items: &'a [Item<'a>], from: TimeOfDay, to: TimeOfDay) -> Stretch<'a> {
-    let active: Vec<_> = items.iter().filter(|item| item.load.windows.iter().any(|w| covers(w, from))).collect();
+fn stretch(items: &[Item], from: TimeOfDay, to: TimeOfDay) -> Stretch {
+    let active: Vec<_> = items.iter().filter(|item| item.load.windows.iter().any(|w| holds(w, from))).collect();
     let turns = Turns::of(&active);
     let alone = || active.iter().filter(|item| item.turn.is_none());
-    let running = alone().map(|item| item.running).sum::<Power>() + turns.sum(|turn| turn.running);
-    let together = alone().map(|item| item.starting_together()).sum::<Power>() + turns.sum(|turn| turn.together);
-    let average = alone().map(|item| item.average).sum::<Watts>() + turns.average();
-    let mut stretch =
-        Stretch { from, to, average, running, together: VoltAmps::ZERO, staggered: VoltAmps::ZERO, active, turns };
-    let single = stretch.active.iter().filter_map(|item| stretch.start_of(item)).map(Power::apparent);
-    stretch.staggered = single.fold(running.apparent(), VoltAmps::max);
-    stretch.together = together.apparent().max(stretch.staggered);
-    stretch
-}
-
-impl Stretch<'_> {
-    /// One piece of a line starting, the rest running; `None` where it may not be on or has no start.
-    pub fn start_of(&self, item: &Item) -> Option<Power> {
-        let active = self.active.iter().any(|other| other.row == item.row);
-        let off = item.turn.map_or(item.running, |turn| self.turns.0.get(turn).map_or(item.running, |t| t.running));
-        item.starting_one().filter(|_| active).map(|start| self.running - off + start)
+    let always: Power = alone().map(|item| item.running).sum();
+    let running = turns.sums(always, None, |item| item.running);
+    let restarting = turns.sums(alone().map(|item| item.restarting()).sum(), None, |item| item.restarting());
+    let starts = starts(&active, &turns, always, &running);
+    let restart = largest(&restarting).apparent();
+    let largest = largest(&running);
+    let staggered = staggered(largest, &starts);
+    Stretch {
+        from,
+        to,
+        average: alone().map(|item| item.average).sum::<Watts>() + turns.average(),
+        real: running.iter().map(|power| power.real).fold(Watts::ZERO, Watts::max),
+        running: largest,
+        staggered,
+        together: restart.max(staggered),
+        starts,
     }
 }
 
-/// Whether a window holds a moment; one that ends before it begins runs over midnight.
-fn covers(window: &Window, moment: TimeOfDay) -> bool {
+/// The start of each line that has one; beside a line that takes turns its group rests.
+fn starts(active: &[&Item], turns: &Turns, always: Power, running: &[Power]) -> Vec<StartNeed> {
+    let beside: Vec<_> = (0..turns.count()).map(|turn| turns.sums(always, Some(turn), |item| item.running)).collect();
+    let start_of = |item: &&Item| {
+        let start = item.start?;
+        let (others, off) = match item.turn {
+            Some(turn) => (beside[turn].as_slice(), item.one - item.running),
+            None => (running, item.one),
+        };
+        let rests = others.iter().map(|others| *others - off);
+        let (row, kind, lasts) = (item.row, item.load.start, item.load.surge_lasts);
+        let needs = rests.map(|rest| StartNeed { row, kind, lasts, rest, start });
+        hardest(needs)
+    };
+    active.iter().filter_map(start_of).collect()
+}
+
+impl Stretch {
+    /// How the design shows it.
+    pub fn shown(&self) -> DayStretch {
+        let Self { from, to, average, real: peak, running, .. } = *self;
+        DayStretch { from, to, average, peak, peak_va: running.apparent() }
+    }
+}
+
+/// The start that asks most; the first of equals.
+pub fn hardest(needs: impl Iterator<Item = StartNeed>) -> Option<StartNeed> {
+    needs.reduce(|best, next| if next.needed().apparent() > best.needed().apparent() { next } else { best })
+}
+
+fn staggered(running: Power, starts: &[StartNeed]) -> VoltAmps {
+    let surges = starts.iter().filter(|need| need.is_surge()).map(|need| need.needed().apparent());
+    surges.fold(running.apparent(), VoltAmps::max)
+}
+
+fn largest(powers: &[Power]) -> Power {
+    let largest = powers.iter().max_by(|a, b| a.apparent().order(&b.apparent()));
+    largest.copied().unwrap_or_default()
+}
+
+/// Whether a window holds a moment; one that ends before it begins runs over midnight, and one that
+/// ends where it begins is the whole day.
+fn holds(window: &Window, moment: TimeOfDay) -> bool {
     if window.from < window.to {
         window.from <= moment && moment < window.to
     } else {
         window.from <= moment || moment < window.to
-    }
-}
-
-/// What each group that takes turns counts for: its largest member, once.
-struct Turns(Vec<Turn>);
-
-#[derive(Clone, Default)]
-struct Turn {
-    running: Power,
-    together: Power,
-    average: Watts,
-    largest: Watts,
-}
-
-impl Turns {
-    fn of(active: &[&Item]) -> Self {
-        let mut turns =
-            vec![Turn::default(); active.iter().filter_map(|item| item.turn).max().map_or(0, |last| last + 1)];
-        for item in active {
-            if let Some(turn) = item.turn {
-                turns[turn].add(item);
-            }
-        }
-        Self(turns)
-    }
-
-    fn sum(&self, part: impl Fn(&Turn) -> Power) -> Power {
-        self.0.iter().map(part).sum()
-    }
-
-    /// Members share the time: their duties add, but never to more than the largest running alone.
-    fn average(&self) -> Watts {
-        self.0.iter().map(|turn| turn.average.min(turn.largest)).sum()
-    }
-}
-
-impl Turn {
-    fn add(&mut self, item: &Item) {
-        self.average = self.average + item.average;
-        self.largest = self.largest.max(item.running.real);
-        if item.running.apparent() > self.running.apparent() {
-            self.running = item.running;
-        }
-        if item.starting_together().apparent() > self.together.apparent() {
-            self.together = item.starting_together();
-        }
     }
 }

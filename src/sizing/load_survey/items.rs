@@ -1,6 +1,9 @@
 //! The lines of the stay-on list, made ready for adding up.
 
+use std::cmp::Ordering;
+
 use super::power::Power;
+use super::turns;
 use crate::sizing::assumptions::Assumptions;
 use crate::sizing::surge;
 use crate::sizing::survey::{Load, Site, Survey};
@@ -30,37 +33,35 @@ impl<'a> Item<'a> {
         let running = one * f64::from(load.on_together);
         let average = (load.running * f64::from(load.quantity) * load.duty).min(running.real);
         let start = surge::start_power(load, site, assumptions);
-        let turn = load.turn.as_deref().and_then(|name| turns.iter().position(|&turn| turn == name));
+        let turn = load.turn.as_deref().and_then(|name| turns.binary_search(&name).ok());
         Self { row, load, one, running, average, start, turn }
     }
 
-    /// All pieces starting at once.
-    pub fn starting_together(&self) -> Power {
-        self.start.map_or(self.running, |start| start * f64::from(self.load.on_together))
+    /// What the line draws when power returns: motors start anew, everything else runs.
+    pub fn restarting(&self) -> Power {
+        let start = self.start.filter(|_| self.load.start.is_motor());
+        start.map_or(self.running, |start| start * f64::from(self.load.on_together))
     }
 
-    /// One piece starting, the others of this line running.
-    pub fn starting_one(&self) -> Option<Power> {
-        self.start.map(|start| self.running - self.one + start)
+    /// What sets one line apart from another in a sum.
+    fn figures(&self) -> [f64; 6] {
+        let start = self.start.unwrap_or_default();
+        let running = self.running;
+        [running.real.0, running.reactive.0, running.distortion.0, self.average.0, start.real.0, start.reactive.0]
+    }
+
+    fn order(&self, other: &Self) -> Ordering {
+        let pairs = self.figures().into_iter().zip(other.figures());
+        let figures = pairs.map(|(a, b)| a.total_cmp(&b)).find(|order| order.is_ne());
+        figures.unwrap_or(Ordering::Equal).then_with(|| self.turn.cmp(&other.turn))
     }
 }
 
 /// All lines in an order that does not depend on the order of the rows, so that sums do not either.
 pub fn items<'a>(survey: &'a Survey, assumptions: &Assumptions) -> Vec<Item<'a>> {
-    let turns = turns(&survey.loads);
+    let turns = turns::names(&survey.loads);
     let rows = survey.loads.iter().enumerate();
     let mut items: Vec<_> = rows.map(|(row, load)| Item::new(row, load, &survey.site, assumptions, &turns)).collect();
-    items.sort_by(|a, b| {
-        let by_power = a.running.real.order(&b.running.real).then(a.average.order(&b.average));
-        by_power.then_with(|| a.running.apparent().order(&b.running.apparent())).then_with(|| a.turn.cmp(&b.turn))
-    });
+    items.sort_by(Item::order);
     items
-}
-
-/// The names of the groups that take turns, in alphabetical order.
-pub fn turns(loads: &[Load]) -> Vec<&str> {
-    let mut turns: Vec<_> = loads.iter().filter_map(|load| load.turn.as_deref()).collect();
-    turns.sort_unstable();
-    turns.dedup();
-    turns
 }

@@ -7,8 +7,15 @@ mod day;
 mod items;
 pub mod outage;
 mod power;
+mod turns;
 
-pub use items::turns;
+#[cfg(test)]
+pub(crate) mod example;
+#[cfg(test)]
+mod laws;
+#[cfg(test)]
+mod tests;
+
 pub use outage::cuts;
 pub use power::Power;
 
@@ -16,10 +23,10 @@ use super::assumptions::Assumptions;
 use super::design::{DayStretch, Demand, StartNeed};
 use super::finding::Finding;
 use super::sheet::{Checked, Rule, Sheet};
-use super::survey::{LifeSupport, MotorPlate, StartsAt, Survey};
+use super::survey::{LifeSupport, StartsAt, Survey};
+use super::tables::motors;
 use crate::units::{Hours, VoltAmps, WattHours, Watts};
 use day::Stretch;
-use items::Item;
 
 const RUNNING: Rule = Rule {
     symbol: "P",
@@ -42,7 +49,7 @@ const RUNNING_VA: Rule = Rule {
 const TOGETHER: Rule = Rule {
     symbol: "S_together",
     name: "All motors restarting together, the rest running",
-    formula: "S_together = max over the day of |Σ running + Σ starting|",
+    formula: "S_together = max over the day of |Σ running + Σ starting|, P, Q and D apart",
     unit: "VA",
     source: "every motor restarts by itself at the changeover after a break of more than about 0.1 s",
     checked: Checked::CommonPractice,
@@ -51,7 +58,7 @@ const TOGETHER: Rule = Rule {
 const STAGGERED: Rule = Rule {
     symbol: "S_staggered",
     name: "One motor starting at a time, the rest running",
-    formula: "S_staggered = max over the day and the motors of |Σ running − running_i + starting_i|",
+    formula: "S_staggered = max over the day and the starts of |rest running + start|, P, Q and D apart",
     unit: "VA",
     source: "starts one after another, by a delay timer or by hand",
     checked: Checked::CommonPractice,
@@ -80,63 +87,63 @@ pub fn demand(survey: &Survey, assumptions: &Assumptions, sheet: &mut Sheet) -> 
     warn_of_loads(survey, sheet);
     let items = items::items(survey, assumptions);
     let stretches = day::stretches(&items);
-    let day: Vec<_> = stretches.iter().map(day_stretch).collect();
+    let day: Vec<_> = stretches.iter().map(Stretch::shown).collect();
     let autonomy = survey.outage.autonomy;
-    let (worst, worst_energy) = outage::worst_start(&day, autonomy);
-    let (sized, energy) = match survey.outage.starts_at {
-        StartsAt::Worst => (outage::minute(worst), worst_energy),
-        StartsAt::At(time) => (time, outage::energy(&day, time.hours(), autonomy)),
+    let worst = outage::worst_start(&day, autonomy);
+    let sized = match survey.outage.starts_at {
+        StartsAt::Worst => worst,
+        StartsAt::At(time) => time.hours(),
     };
     Demand {
         running: running(&stretches, sheet),
         running_va: running_va(&stretches, sheet),
-        surge_together: starting(&TOGETHER, "demand.surge_together_va", &stretches, |s| s.together, sheet),
-        surge_staggered: starting(&STAGGERED, "demand.surge_staggered_va", &stretches, |s| s.staggered, sheet),
-        outage: outage_energy(energy, sized.hours(), autonomy, sheet),
+        surge_together: together(&stretches, sheet),
+        surge_staggered: staggered(&stretches, sheet),
+        outage: outage_energy(&day, sized, autonomy, sheet),
         worst_start: outage::minute(worst),
-        sized_start: sized,
+        sized_start: outage::minute(sized),
         average_outage: average_outage(&day, autonomy, sheet),
-        starts: start_needs(&items, &stretches),
+        starts: hardest_starts(&stretches, survey.loads.len()),
         day,
     }
 }
 
-fn day_stretch(stretch: &Stretch) -> DayStretch {
-    DayStretch {
-        from: stretch.from,
-        to: stretch.to,
-        average: stretch.average,
-        peak: stretch.running.real,
-        peak_va: stretch.running.apparent(),
-    }
+/// The stretch in which a figure is highest, the earliest of equals, and when it begins.
+fn highest(stretches: &[Stretch], figure: impl Fn(&Stretch) -> f64) -> (&Stretch, (&'static str, f64, &'static str)) {
+    let later = |best, next| if figure(next) > figure(best) { next } else { best };
+    let stretch = stretches.iter().reduce(later).expect("the day has stretches");
+    (stretch, ("from", stretch.from.hours().0, "h"))
 }
 
 fn running(stretches: &[Stretch], sheet: &mut Sheet) -> Watts {
-    let highest = stretches.iter().map(|stretch| stretch.running.real).fold(Watts::ZERO, Watts::max);
-    Watts(sheet.line("demand.running_w", &RUNNING, &[], highest.0))
+    let (stretch, from) = highest(stretches, |stretch| stretch.real.0);
+    Watts(sheet.line("demand.running_w", &RUNNING, &[from], stretch.real.0))
 }
 
 fn running_va(stretches: &[Stretch], sheet: &mut Sheet) -> VoltAmps {
-    let highest = stretches.iter().max_by(|a, b| a.running.apparent().order(&b.running.apparent()));
-    let power = highest.map_or_else(Power::default, |stretch| stretch.running);
-    let values = [("ΣP", power.real.0, "W"), ("ΣQ", power.reactive.0, "var"), ("ΣD", power.distortion.0, "VA")];
-    VoltAmps(sheet.line("demand.running_va", &RUNNING_VA, &values, power.apparent().0))
+    let (stretch, from) = highest(stretches, |stretch| stretch.running.apparent().0);
+    let Power { real, reactive, distortion } = stretch.running;
+    let values = [from, ("ΣP", real.0, "W"), ("ΣQ", reactive.0, "var"), ("ΣD", distortion.0, "VA")];
+    VoltAmps(sheet.line("demand.running_va", &RUNNING_VA, &values, stretch.running.apparent().0))
 }
 
-fn starting(
-    rule: &Rule,
-    figure: &'static str,
-    stretches: &[Stretch],
-    part: fn(&Stretch) -> VoltAmps,
-    sheet: &mut Sheet,
-) -> VoltAmps {
-    let highest = stretches.iter().map(part).fold(VoltAmps::ZERO, VoltAmps::max);
-    VoltAmps(sheet.line(figure, rule, &[], highest.0))
+fn together(stretches: &[Stretch], sheet: &mut Sheet) -> VoltAmps {
+    let (stretch, from) = highest(stretches, |stretch| stretch.together.0);
+    let values = [from, ("S", stretch.running.apparent().0, "VA")];
+    VoltAmps(sheet.line("demand.surge_together_va", &TOGETHER, &values, stretch.together.0))
 }
 
-fn outage_energy(energy: WattHours, start: Hours, autonomy: Hours, sheet: &mut Sheet) -> WattHours {
+fn staggered(stretches: &[Stretch], sheet: &mut Sheet) -> VoltAmps {
+    let (stretch, from) = highest(stretches, |stretch| stretch.staggered.0);
+    let hardest = day::hardest(stretch.starts.iter().filter(|need| need.is_surge()).copied());
+    let parts = hardest.map(|need| [("rest", need.rest.apparent().0, "VA"), ("start", need.start.apparent().0, "VA")]);
+    let values: Vec<_> = [from].into_iter().chain(parts.into_iter().flatten()).collect();
+    VoltAmps(sheet.line("demand.surge_staggered_va", &STAGGERED, &values, stretch.staggered.0))
+}
+
+fn outage_energy(day: &[DayStretch], start: Hours, autonomy: Hours, sheet: &mut Sheet) -> WattHours {
     let values = [("start", start.0, "h"), ("t", autonomy.0, "h")];
-    WattHours(sheet.line("demand.outage_wh", &OUTAGE, &values, energy.0))
+    WattHours(sheet.line("demand.outage_wh", &OUTAGE, &values, outage::energy(day, start, autonomy).0))
 }
 
 fn average_outage(day: &[DayStretch], autonomy: Hours, sheet: &mut Sheet) -> WattHours {
@@ -145,17 +152,14 @@ fn average_outage(day: &[DayStretch], autonomy: Hours, sheet: &mut Sheet) -> Wat
     WattHours(sheet.line("demand.average_outage_wh", &AVERAGE, &values, energy.0 * autonomy.0 / 24.0))
 }
 
-/// The hardest start of each motor over the day, in the order of the rows.
-fn start_needs(items: &[Item], stretches: &[Stretch]) -> Vec<StartNeed> {
-    let need = |item: &Item| {
-        let start = item.start.filter(|_| item.load.start.is_motor())?;
-        let hardest = stretches.iter().filter_map(|stretch| stretch.start_of(item));
-        let hardest = hardest.max_by(|a, b| a.apparent().order(&b.apparent()))?;
-        Some(StartNeed { row: item.row, start: start.apparent(), needed: hardest.apparent(), needed_w: hardest.real })
-    };
-    let mut needs: Vec<_> = items.iter().filter_map(need).collect();
-    needs.sort_by_key(|need| need.row);
-    needs
+/// The hardest start of each load over the day, in the order of the rows.
+fn hardest_starts(stretches: &[Stretch], rows: usize) -> Vec<StartNeed> {
+    let mut hardest: Vec<Option<StartNeed>> = vec![None; rows];
+    for need in stretches.iter().flat_map(|stretch| &stretch.starts) {
+        let best = &mut hardest[need.row];
+        *best = day::hardest(best.iter().copied().chain([*need]));
+    }
+    hardest.into_iter().flatten().collect()
 }
 
 /// Loads that a life hangs on, and motors whose plate leaves their start open.
@@ -164,7 +168,7 @@ fn warn_of_loads(survey: &Survey, sheet: &mut Sheet) {
         if load.life_support != LifeSupport::No {
             sheet.find(Finding::MedicalLoad { load: load.name.clone(), kind: load.life_support });
         }
-        if matches!(load.motor_plate, Some(MotorPlate::CodeLetter { letter: 'V', .. })) {
+        if load.motor_plate.is_some_and(motors::leaves_start_open) {
             sheet.find(Finding::CodeLetterOpen { load: load.name.clone() });
         }
     }

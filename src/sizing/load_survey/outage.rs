@@ -19,8 +19,9 @@ pub fn cuts(survey: &Survey, demand: &Demand) -> Vec<Vec<(Watts, Hours)>> {
 
 /// The starts among which the worst one is.
 ///
-/// Energy and step sums are piecewise linear in the start: they bend only where the start or the end
-/// of the cut meets a boundary of the day, so their greatest value lies at such a start.
+/// The energy of a cut, as any sum over its steps of a length times a function of the power, is
+/// piecewise linear in its start: it bends only where the start or the end of the cut meets a boundary
+/// of the day, so its greatest value lies at such a start.
 pub fn candidate_starts(day: &[DayStretch], autonomy: Hours) -> Vec<Hours> {
     let boundaries = day.iter().map(|stretch| stretch.from.hours());
     let mut starts: Vec<_> = boundaries.flat_map(|at| [at, Hours((at.0 - autonomy.0).rem_euclid(DAY))]).collect();
@@ -61,16 +62,54 @@ pub fn day_energy(day: &[DayStretch]) -> WattHours {
     day.iter().map(|stretch| stretch.average * (stretch.to.hours() - stretch.from.hours())).sum()
 }
 
-/// The start that costs most energy, and that energy; the earliest of equals.
-pub fn worst_start(day: &[DayStretch], autonomy: Hours) -> (Hours, WattHours) {
-    let mut worst = (Hours::ZERO, WattHours(-1.0));
+/// The start that costs most energy; the earliest of equals.
+pub fn worst_start(day: &[DayStretch], autonomy: Hours) -> Hours {
+    let meter = Meter::new(day);
+    let hair = meter.day().0 * 1e-12;
+    let mut worst = (Hours::ZERO, -1.0);
     for start in candidate_starts(day, autonomy) {
-        let energy = energy(day, start, autonomy);
-        if energy.0 > worst.1.0 * (1.0 + 1e-12) {
+        let energy = meter.between(start, Hours(autonomy.0.rem_euclid(DAY))).0;
+        if energy > worst.1 + hair {
             worst = (start, energy);
         }
     }
-    worst
+    worst.0
+}
+
+/// Energy counted from midnight, so that a cut costs two readings, however many stretches it covers.
+struct Meter<'a> {
+    day: &'a [DayStretch],
+    /// Energy from midnight to the beginning of each stretch, and of the whole day at the end.
+    readings: Vec<WattHours>,
+}
+
+impl<'a> Meter<'a> {
+    fn new(day: &'a [DayStretch]) -> Self {
+        let mut readings = vec![WattHours::ZERO];
+        for stretch in day {
+            let before = readings[readings.len() - 1];
+            readings.push(before + stretch.average * (stretch.to.hours() - stretch.from.hours()));
+        }
+        Self { day, readings }
+    }
+
+    fn day(&self) -> WattHours {
+        self.readings[self.day.len()]
+    }
+
+    fn until(&self, moment: Hours) -> WattHours {
+        let index = self.day.partition_point(|stretch| stretch.from.hours() <= moment).saturating_sub(1);
+        self.readings[index] + self.day[index].average * (moment - self.day[index].from.hours())
+    }
+
+    fn between(&self, start: Hours, length: Hours) -> WattHours {
+        let end = start + length;
+        if end.0 <= DAY {
+            self.until(end) - self.until(start)
+        } else {
+            self.day() - self.until(start) + self.until(Hours(end.0 - DAY))
+        }
+    }
 }
 
 /// The minute of the day that a moment falls in.
