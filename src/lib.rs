@@ -9,6 +9,7 @@ pub mod documents;
 pub mod jobs;
 pub mod keys;
 pub mod money;
+pub mod offer;
 pub mod qr;
 pub mod quotes;
 pub mod sizing;

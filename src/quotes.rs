@@ -1,7 +1,9 @@
 //! Quotes: prices, the sheet that is frozen for the customer, links to it, and the answer.
 
+pub mod changes;
 pub mod price;
 mod quantity;
+pub mod share_key;
 pub mod sheet;
 
 pub use quantity::Quantity;

@@ -8,6 +8,8 @@ use std::sync::LazyLock;
 
 use fluent_bundle::concurrent::FluentBundle;
 use fluent_bundle::{FluentArgs, FluentResource};
+use jiff::ZonedDateTime;
+use jiff::civil::Date;
 use unic_langid::LanguageIdentifier;
 
 pub use fluent_bundle::FluentValue;
@@ -55,27 +57,42 @@ impl Words {
 
     /// A message without values.
     pub fn say(&self, name: &str) -> String {
-        self.fill(name, [])
+        self.fill(name, &[])
     }
 
     /// A message with values; a name that no table has is printed as it is, so that it is seen.
-    pub fn fill<'a, const N: usize>(&self, name: &'a str, values: [(&'a str, FluentValue<'a>); N]) -> String {
+    pub fn fill<'a>(&self, name: &str, values: &[(&'a str, FluentValue<'a>)]) -> String {
         let Some(pattern) = self.bundle.get_message(name).and_then(|message| message.value()) else {
             return name.to_owned();
         };
-        let arguments: FluentArgs = values.into_iter().collect();
+        let arguments: FluentArgs = values.iter().cloned().collect();
         self.bundle.format_pattern(pattern, Some(&arguments), &mut Vec::new()).into_owned()
     }
 
     /// A length of time in whole hours and minutes: "6 hours 30 minutes".
     pub fn duration(&self, hours: f64) -> String {
         let minutes = (hours * 60.0).round().max(0.0) as u32;
-        let part = |name, count: u32| self.fill(name, [("count", count.into())]);
+        let part = |name, count: u32| self.fill(name, &[("count", count.into())]);
         match (minutes / 60, minutes % 60) {
             (0, minutes) => part("minutes", minutes),
             (hours, 0) => part("hours", hours),
             (hours, minutes) => format!("{} {}", part("hours", hours), part("minutes", minutes)),
         }
+    }
+
+    /// A day: "1 December 2026".
+    pub fn date(&self, day: Date) -> String {
+        let month = self.say(&format!("month-{}", day.month()));
+        self.fill(
+            "date",
+            &[("day", day.day().into()), ("month", month.into()), ("year", day.year().to_string().into())],
+        )
+    }
+
+    /// A day and a time of day: "1 December 2026, 14:03".
+    pub fn moment(&self, moment: &ZonedDateTime) -> String {
+        let time = moment.strftime("%H:%M").to_string();
+        self.fill("date-time", &[("date", self.date(moment.date()).into()), ("time", time.into())])
     }
 }
 
@@ -153,6 +170,12 @@ mod tests {
         ] {
             assert_eq!(words.duration(hours).replace('\u{a0}', " "), told);
         }
+    }
+
+    #[test]
+    fn a_moment_is_told_with_the_month_in_letters() {
+        let moment: ZonedDateTime = "2026-02-09T04:07:59[UTC]".parse().unwrap();
+        assert_eq!(Words::of("en").moment(&moment), "9 February 2026, 04:07");
     }
 
     #[test]

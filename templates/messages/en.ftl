@@ -16,12 +16,27 @@ years = { $count ->
    *[other] { $count } years
 }
 
+date = { $day } { $month } { $year }
+date-time = { $date }, { $time }
+month-1 = January
+month-2 = February
+month-3 = March
+month-4 = April
+month-5 = May
+month-6 = June
+month-7 = July
+month-8 = August
+month-9 = September
+month-10 = October
+month-11 = November
+month-12 = December
+
 ## Head of the sheet
 
 offer-title = Offer from { $firm }
 offer-heading = Power when the mains goes off
 offer-for = For
-offer-sheet = Sheet { $number }
+offer-sheet = Sheet { $number }, version { $version }
 offer-made-on = Made on { $date }
 offer-call = Call { $phone }
 offer-licence = Licence { $number }
@@ -41,13 +56,11 @@ promise-more = A new battery, or fewer things switched on, lasts longer.
 ## What stays on
 
 on-heading = What stays on
-on-name = Thing
-on-quantity = How many
-on-when = When
+on-count = { $count } ×
 on-all-day = all day
 on-between = { $from } to { $to }
 on-and = { $first } and { $second }
-on-share = working about { $percent } % of the time
+on-share = working about { $percent }{"\u00A0"}% of the time
 on-together = up to { $count } at once
 medical-heading = No promise for these
 medical-told = A life, a treatment or a precious product may hang on these things. We promise no hours for them.
@@ -67,16 +80,15 @@ turn-or = or
 ## The picture
 
 cut-heading = How a power cut goes
-cut-told = The line shows how much is left in the battery, hour by hour.
-cut-picture = Charge left in the battery over a power cut of { $duration }. It ends at about { $percent } %.
+cut-told = The line shows how much a new battery has left, hour by hour.
+cut-picture = Charge left in the battery over a power cut of { $duration }. It ends at about { $left }.
 cut-table = The same in figures
-cut-time = Time
 cut-after = After
 cut-drawn = In use
 cut-left = Left in the battery
-cut-percent = { $percent } %
-cut-watts = { $watts } W
+cut-percent = { $percent }{"\u00A0"}%
 cut-start = start
+cut-hours = { $hours }{"\u00A0"}h
 
 ## What we fit
 
@@ -87,7 +99,7 @@ fit-each = Each
 fit-sum = Price
 fit-labour = Work
 fit-subtotal = Before tax
-fit-tax = Tax, { $percent } %
+fit-tax = Tax, { $percent }{"\u00A0"}%
 fit-total = Total
 price-heading = Price
 price-ends = This price holds until { $date }.
@@ -97,7 +109,7 @@ price-note = A word from us
 
 good-heading = Good to know
 good-refill = After such a cut the battery needs about { $duration } of mains to fill again.
-good-years = Here the battery should serve about { $years }.
+good-years = Here the battery should serve about { $duration }.
 good-years-less = Here the battery should serve less than a year. Talk to us about this first.
 good-heat = Heat wears a battery out. Keep its place shaded and airy.
 good-added = Each thing you add later shortens the time. Ask us before you add one.
@@ -198,7 +210,7 @@ kit-cable-battery = { $metal } single-core cable { $size }, { $run }, per metre
 kit-cable-supply = { $metal } cable, line and neutral { $size }, earth { $earth }, { $run }, per metre
 kit-copper = Copper
 kit-aluminium = Aluminium
-kit-device = { $device } { $rating }, breaking { $breaks }, { $run }
+kit-device = { $device }, { $rating }, breaking { $breaks }, { $run }
 kit-run-bank-to-inverter = battery to inverter
 kit-run-string-lead = battery string leads
 kit-run-inverter-to-board = inverter to board
