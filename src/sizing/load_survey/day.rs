@@ -91,17 +91,20 @@ impl Stretch {
 
 /// The start that asks most; the first of equals.
 pub fn hardest(needs: impl Iterator<Item = StartNeed>) -> Option<StartNeed> {
-    needs.reduce(|best, next| if next.needed().apparent() > best.needed().apparent() { next } else { best })
+    needs.reduce(|best, next| if next.needed().square() > best.needed().square() { next } else { best })
 }
 
 fn staggered(running: Power, starts: &[StartNeed]) -> VoltAmps {
-    let surges = starts.iter().filter(|need| need.is_surge()).map(|need| need.needed().apparent());
-    surges.fold(running.apparent(), VoltAmps::max)
+    let surges = starts.iter().filter(|need| need.is_surge()).map(|need| need.needed());
+    largest_of(running, surges).apparent()
 }
 
 fn largest(powers: &[Power]) -> Power {
-    let largest = powers.iter().max_by(|a, b| a.apparent().order(&b.apparent()));
-    largest.copied().unwrap_or_default()
+    largest_of(Power::default(), powers.iter().copied())
+}
+
+fn largest_of(first: Power, others: impl Iterator<Item = Power>) -> Power {
+    others.fold(first, |most, next| if next.square() > most.square() { next } else { most })
 }
 
 /// Whether a window holds a moment; one that ends before it begins runs over midnight, and one that

@@ -32,8 +32,9 @@ pub fn candidate_starts(day: &[DayStretch], autonomy: Hours) -> Vec<Hours> {
 
 /// Average power and length of each step of a cut, in the order of time; equal neighbours are one.
 pub fn steps(day: &[DayStretch], start: Hours, autonomy: Hours) -> Vec<(Watts, Hours)> {
-    let mut steps: Vec<(Watts, Hours)> = Vec::with_capacity(day.len() + 1);
-    let mut index = day.iter().rposition(|stretch| stretch.from.hours() <= start).unwrap_or(0);
+    let about = (autonomy.0 / DAY * day.len() as f64) as usize;
+    let mut steps: Vec<(Watts, Hours)> = Vec::with_capacity(about + 2);
+    let mut index = stretch_at(day, start);
     let (mut now, mut left) = (start, autonomy);
     while left > Hours::ZERO {
         let stretch = &day[index];
@@ -48,6 +49,11 @@ pub fn steps(day: &[DayStretch], start: Hours, autonomy: Hours) -> Vec<(Watts, H
         now = day[index].from.hours();
     }
     steps
+}
+
+/// The stretch that a moment falls in.
+fn stretch_at(day: &[DayStretch], moment: Hours) -> usize {
+    day.partition_point(|stretch| stretch.from.hours() <= moment).saturating_sub(1)
 }
 
 /// Energy of a cut from a start.
@@ -98,7 +104,7 @@ impl<'a> Meter<'a> {
     }
 
     fn until(&self, moment: Hours) -> WattHours {
-        let index = self.day.partition_point(|stretch| stretch.from.hours() <= moment).saturating_sub(1);
+        let index = stretch_at(self.day, moment);
         self.readings[index] + self.day[index].average * (moment - self.day[index].from.hours())
     }
 

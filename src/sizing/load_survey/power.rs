@@ -43,7 +43,14 @@ impl Power {
     ///
     /// Source (from memory): IEEE 1459-2010, arithmetic of the powers of one phase.
     pub fn apparent(self) -> VoltAmps {
-        VoltAmps(self.real.0.hypot(self.reactive.0).hypot(self.distortion.0))
+        VoltAmps(self.square().sqrt())
+    }
+}
+
+impl Power {
+    /// `S²`, which is enough to say which of two is larger.
+    pub(crate) fn square(self) -> f64 {
+        self.real.0.powi(2) + self.reactive.0.powi(2) + self.distortion.0.powi(2)
     }
 }
 
