@@ -8,22 +8,35 @@ use crate::sizing::survey::Survey;
 use crate::sizing::tables::trade_sizes::SMALL_INVERTER_VA;
 use crate::units::{VoltAmps, Watts};
 
+const FIT: &str = "three-term loss model of Schmidt and Sauer; fit to 36 battery inverters of 24 and 48 V in open test data \
+                   of a US energy commission";
+
+const ESTIMATE: &str = "three-term loss model of Schmidt and Sauer; estimate for small 12 V units, whose full load falls \
+                        into the lowest band of India's star label";
+
 const NO_LOAD: Rule = Rule {
     symbol: "P_0",
     name: "Draw of the unit with nothing on",
     formula: "P_0 = p_0 · P_rated",
     unit: "W",
-    source: "three-term loss model of Schmidt and Sauer; fit to measured battery inverters of 24 and 48 V in open test data",
+    source: FIT,
     checked: Checked::Read,
 };
 
-const LOSS_TERM: Rule = Rule {
-    symbol: "k",
-    name: "Loss term of the unit",
-    formula: "P_dc = P_0 + (1 + k_1)·P + k_2·P² / P_rated",
+const LINEAR: Rule = Rule {
+    symbol: "k_1",
+    name: "Loss in proportion to the load",
+    formula: "k_1 as assumed for the size of the unit",
     unit: "",
-    source: "three-term loss model of Schmidt and Sauer; fit to measured battery inverters of 24 and 48 V in open test data",
+    source: FIT,
     checked: Checked::Read,
+};
+
+const QUADRATIC: Rule = Rule {
+    symbol: "k_2",
+    name: "Loss by the square of the load",
+    formula: "k_2 as assumed for the size of the unit",
+    ..LINEAR
 };
 
 const RATED: Rule = Rule {
@@ -47,7 +60,9 @@ const PEAK_DC: Rule = Rule {
 /// Small units built for 12 V lose more than larger ones.
 pub fn losses(rating: VoltAmps, rated: Watts, assumptions: &Assumptions, sheet: &mut Sheet) -> Losses {
     let a = assumptions;
-    let (no_load, linear, quadratic) = if rating.0 <= SMALL_INVERTER_VA {
+    let small = rating.0 <= SMALL_INVERTER_VA;
+    let of_class = |rule| if small { Rule { source: ESTIMATE, checked: Checked::FromMemory, ..rule } } else { rule };
+    let (no_load, linear, quadratic) = if small {
         (a.small_loss_no_load, a.small_loss_linear, a.small_loss_quadratic)
     } else {
         (a.loss_no_load, a.loss_linear, a.loss_quadratic)
@@ -55,9 +70,9 @@ pub fn losses(rating: VoltAmps, rated: Watts, assumptions: &Assumptions, sheet: 
     let values = [("p_0", no_load, ""), ("P_rated", rated.0, "W")];
     sheet.line("inverter.losses.rated_w", &RATED, &[], rated.0);
     Losses {
-        no_load: Watts(sheet.line("inverter.losses.no_load_w", &NO_LOAD, &values, no_load * rated.0)),
-        linear: sheet.line("inverter.losses.linear", &LOSS_TERM, &[], linear),
-        quadratic: sheet.line("inverter.losses.quadratic", &LOSS_TERM, &[], quadratic),
+        no_load: Watts(sheet.line("inverter.losses.no_load_w", &of_class(NO_LOAD), &values, no_load * rated.0)),
+        linear: sheet.line("inverter.losses.linear", &of_class(LINEAR), &[], linear),
+        quadratic: sheet.line("inverter.losses.quadratic", &of_class(QUADRATIC), &[], quadratic),
         rated,
     }
 }

@@ -19,7 +19,7 @@ const CHANGEOVER: Rule = Rule {
 const WINDOW: Rule = Rule {
     symbol: "V_window",
     name: "Mains that the unit accepts in that window",
-    formula: "V_window = share of the nominal supply, or as known of the unit that is there",
+    formula: "V_window = w · V; w as assumed, or known of the unit that is there",
     unit: "V",
     source: "190 to 250 V narrow, 110 to 270 V wide at 230 V",
     checked: Checked::CommonPractice,
@@ -40,9 +40,9 @@ pub fn window(survey: &Survey, assumptions: &Assumptions, sheet: &mut Sheet) -> 
     } else if !inside(narrow) {
         sheet.find(Finding::MainsOutsideNarrowWindow { lowest, highest, window: narrow });
     }
-    let nominal = [("V", site.supply.0, "V")];
-    sheet.line("inverter.mains_window_v[0]", &WINDOW, &nominal, window.0.0);
-    sheet.line("inverter.mains_window_v[1]", &WINDOW, &nominal, window.1.0);
+    let values = |end: AcVolts| [("w", end / site.supply, ""), ("V", site.supply.0, "V")];
+    sheet.line("inverter.mains_window_v[0]", &WINDOW, &values(window.0), window.0.0);
+    sheet.line("inverter.mains_window_v[1]", &WINDOW, &values(window.1), window.1.0);
     (kind, window)
 }
 

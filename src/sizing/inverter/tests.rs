@@ -125,6 +125,18 @@ fn a_small_unit_draws_about_an_ampere_for_itself() {
 }
 
 #[test]
+fn the_sheet_tells_a_measured_fit_from_an_estimate() {
+    for (watts, checked) in [(300.0, Checked::FromMemory), (1500.0, Checked::Read)] {
+        let survey = survey(vec![heat(watts)]);
+        let (demand, mut sheet) = demand_of(&survey);
+        inverter(&survey, &demand, &Assumptions::defaults(survey.choice.chemistry), &mut sheet);
+        let losses =
+            sheet.working.iter().filter(|line| line.figure.starts_with("inverter.losses.") && line.symbol != "P_rated");
+        assert_eq!(losses.map(|line| line.checked).collect::<Vec<_>>(), [checked; 3], "{watts} W");
+    }
+}
+
+#[test]
 fn the_peak_draw_on_the_bank_holds_all_losses() {
     let (unit, _) = unit_of(&survey(vec![heat(800.0)]));
     // By hand: 1250 VA, 1000 W; 13 + 800 + 0.121 · 800² / 1000.
