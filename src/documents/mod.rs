@@ -17,3 +17,6 @@ mod write;
 
 pub use draft::Draft;
 pub use fault::Fault;
+
+#[cfg(test)]
+mod tests;

@@ -27,12 +27,16 @@ pub fn read(text: &str) -> Result<(Draft, Survey), Vec<Fault>> {
         Ok(survey) if faults.is_empty() => Ok((draft, survey)),
         Ok(_) => Err(faults),
         Err(missing) => {
-            let known = |fault: &Fault| faults.iter().any(|other| other.path.starts_with(&fault.path));
-            let new: Vec<_> = missing.into_iter().filter(|fault| !known(fault)).collect();
+            let new: Vec<_> = missing.into_iter().filter(|fault| !is_known(&fault.path, &faults)).collect();
             faults.extend(new);
             Err(faults)
         }
     }
+}
+
+/// Whether a fault was told already at this path, within it, or of what holds it.
+fn is_known(path: &str, faults: &[Fault]) -> bool {
+    faults.iter().any(|fault| fault.path.starts_with(path) || path.starts_with(&fault.path))
 }
 
 /// Reads a survey in progress; loads and cut may be missing.
@@ -194,12 +198,11 @@ fn loads(object: &mut Object) -> Vec<Load> {
     entries.into_iter().enumerate().filter_map(read).collect()
 }
 
+/// `None` without name or watts; every other key is read all the same, so that its faults are told too.
 fn load(o: &mut Object) -> Option<Load> {
     let name = required_name(o);
-    let running = o.number("running_w", limit::RUNNING_W);
-    if running.is_none() && o.raw("running_w").is_none() {
-        o.fault("running_w", format!("is missing: {}", limit::RUNNING_W.told()));
-    }
+    let running = required(o, "running_w", limit::RUNNING_W);
+    let is_whole = name.is_some() && running.is_some();
     let start = o.choice_or("start", defaults::START);
     let usual = usual(start);
     let quantity = o.number_or("quantity", limit::QUANTITY, 1.0);
@@ -207,11 +210,11 @@ fn load(o: &mut Object) -> Option<Load> {
     if on_together > quantity {
         o.fault("on_together", "give no more than quantity");
     }
-    Some(Load {
-        name: name?,
+    let load = Load {
+        name: name.unwrap_or_default(),
         quantity: quantity as u32,
         on_together: on_together.min(quantity) as u32,
-        running: Watts(running?),
+        running: Watts(running.unwrap_or(limit::RUNNING_W.lowest)),
         power_factor: share(o.number_or("power_factor", limit::POWER_FACTOR, usual.power_factor)),
         start,
         surge_multiple: o.number_or("surge_multiple", limit::SURGE_MULTIPLE, usual.surge_multiple),
@@ -223,16 +226,17 @@ fn load(o: &mut Object) -> Option<Load> {
         needs_sine: o.choice_or("needs_sine", usual.needs_sine),
         max_break: Milliseconds(o.number_or("max_break_ms", limit::MAX_BREAK_MS, usual.max_break_ms)),
         life_support: o.choice_or("life_support", defaults::LIFE_SUPPORT),
-    })
+    };
+    is_whole.then_some(load)
 }
 
 fn required_name(o: &mut Object) -> Option<String> {
     let given = o.raw("name").is_some();
-    let name = o.text("name", limit::NAME).filter(|name| !name.is_empty());
-    if name.is_none() && (!given || o.text("name", limit::NAME).is_some()) {
+    let name = o.text("name", limit::NAME);
+    if !given || name.as_deref() == Some("") {
         o.fault("name", "give a name");
     }
-    name
+    name.filter(|name| !name.is_empty())
 }
 
 /// A number that was checked to be a share.
