@@ -51,7 +51,7 @@ impl Strings {
 /// Strings of one block size that carry a capacity; installed is never less than required.
 fn count(required: AmpHours, block: AmpHours) -> u32 {
     let strings = (required / block).ceil().max(1.0) as u32;
-    if block * f64::from(strings) < required { strings + 1 } else { strings }
+    if block * f64::from(strings) < required { strings.saturating_add(1) } else { strings }
 }
 
 /// Cut-off of a whole string.

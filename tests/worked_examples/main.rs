@@ -1,0 +1,62 @@
+//! Whole designs: their sheets, the laws they keep, and one of them by hand.
+
+mod laws;
+mod sheet;
+mod surveys;
+
+use keeplit::documents::{Draft, design, survey};
+use keeplit::sizing::{self, Design, Survey};
+use serde_json::Value;
+
+/// Reads a survey in the form of the command line.
+fn read(text: &str) -> (Draft, Survey) {
+    survey::read(text).unwrap_or_else(|faults| panic!("{faults:?}"))
+}
+
+/// The answer to a survey with the job's own assumptions.
+fn answer(text: &str) -> Design {
+    let (draft, survey) = read(text);
+    sizing::size(&survey, draft.assumptions(&[]))
+}
+
+/// The answer as the command line writes it.
+fn written(text: &str) -> Value {
+    let (draft, survey) = read(text);
+    design::write(&sizing::size(&survey, draft.assumptions(&[])), &draft)
+}
+
+/// Every number below a value, with the path by which the sheet names it.
+fn numbers(path: &str, value: &Value, found: &mut Vec<(String, f64)>) {
+    match value {
+        Value::Number(number) => found.push((path.to_owned(), number.as_f64().expect("a number"))),
+        Value::Array(entries) => {
+            for (at, entry) in entries.iter().enumerate() {
+                numbers(&place(path, at, entry), entry, found);
+            }
+        }
+        Value::Object(members) => {
+            for (key, member) in members {
+                numbers(&format!("{path}.{key}"), member, found);
+            }
+        }
+        _ => {}
+    }
+}
+
+/// Cables and starts stand under their names, other entries under their place.
+fn place(path: &str, at: usize, entry: &Value) -> String {
+    match entry.get("run").or(entry.get("load")).and_then(Value::as_str) {
+        Some(name) => format!("{path}.{name}"),
+        None => format!("{path}[{at}]"),
+    }
+}
+
+/// Every number of the stages, the day's stretches left out.
+fn stage_numbers(design: &Value) -> Vec<(String, f64)> {
+    let mut found = Vec::new();
+    for stage in ["demand", "inverter", "bank", "starts", "charger", "cables", "ventilation", "life"] {
+        numbers(stage, &design[stage], &mut found);
+    }
+    found.retain(|(path, _)| !path.starts_with("demand.day["));
+    found
+}
