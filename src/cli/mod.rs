@@ -1,5 +1,6 @@
 //! The command line: arguments and environment in, exit code out.
 
+mod serve;
 mod size;
 
 use std::process::ExitCode;
@@ -22,6 +23,8 @@ struct Arguments {
 enum Command {
     /// Answer a survey file with the design, as JSON
     Size(size::Arguments),
+    /// Start the service
+    Serve(serve::Arguments),
 }
 
 /// Runs the command that the arguments name.
@@ -30,6 +33,7 @@ enum Command {
 pub fn run() -> ExitCode {
     let done = match Arguments::parse().command {
         Command::Size(arguments) => size::run(&arguments),
+        Command::Serve(arguments) => serve::run(arguments),
     };
     done.unwrap_or_else(|error| {
         eprintln!("keeplit: {error:#}");

@@ -47,6 +47,14 @@ impl Numbers {
         format!("{sign}{}{mark}{rest}", grouped(whole, group))
     }
 
+    /// A number as it stands in a field, without groups.
+    pub fn typed(self, value: f64) -> String {
+        let mark = if self.mark == DecimalMark::Point { "." } else { "," };
+        let text = format!("{value:.6}");
+        let text = text.trim_end_matches('0').trim_end_matches('.');
+        (if text == "-0" { "0" } else { text }).replace('.', mark)
+    }
+
     /// A number with three figures or all its whole digits: 1,234 · 123 · 12.3 · 1.23 · 0.0123.
     pub fn three_figures(self, value: f64) -> String {
         let size = value.abs();

@@ -1,0 +1,11 @@
+//! Numbers as people type them on a nameplate's word: either decimal mark, groups, spaces of all
+//! kinds, digits of other scripts, and the unit in the box.
+
+mod number;
+mod quantities;
+
+pub use number::{Trouble, Typed, number_and_unit};
+pub use quantities::{
+    MOTOR_EFFICIENCY, Power, PowerUnit, WATTS_PER_HORSEPOWER, counted, hours, metres, money_minor, one_line, percent,
+    plain, power, temperature, whole,
+};

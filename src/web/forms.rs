@@ -1,0 +1,134 @@
+//! Forms: read whole, complained about at once, shown again as typed.
+
+use askama::Template;
+use axum::body::Bytes;
+use axum::extract::{FromRequest, Request};
+use axum::http::StatusCode;
+use axum::http::header::CONTENT_TYPE;
+use axum::response::{Html, IntoResponse, Redirect, Response};
+use serde::de::DeserializeOwned;
+
+use super::app::App;
+use super::error::Error;
+use crate::keys::{OneTimeKey, Revision};
+use crate::store::Once;
+
+/// A form as it arrived: every field is text.
+pub struct Form<T>(pub T);
+
+impl<T: DeserializeOwned, S: Send + Sync> FromRequest<S> for Form<T> {
+    type Rejection = Response;
+
+    async fn from_request(request: Request, state: &S) -> Result<Self, Response> {
+        let kind = request.headers().get(CONTENT_TYPE).and_then(|kind| kind.to_str().ok()).unwrap_or("");
+        if !kind.starts_with("application/x-www-form-urlencoded") {
+            return Err(StatusCode::UNSUPPORTED_MEDIA_TYPE.into_response());
+        }
+        let body = Bytes::from_request(request, state).await.map_err(IntoResponse::into_response)?;
+        read(&body).map(Self).map_err(IntoResponse::into_response)
+    }
+}
+
+/// Reads the text of a form; rows are in brackets: `loads[3][name]`.
+pub fn read<T: DeserializeOwned>(body: &[u8]) -> Result<T, Error> {
+    let text = std::str::from_utf8(body).map_err(|_| Error::Unusable("the form is not text"))?;
+    let config = serde_qs::Config::new().max_depth(3).use_form_encoding(true);
+    config.deserialize_str(text).map_err(|_| Error::Unusable("the form does not fit the page"))
+}
+
+/// The submit of a form that carries a key.
+pub fn submit(app: &App, key: &str) -> Result<Once, Error> {
+    let key = OneTimeKey::read(key).ok_or(Error::Unusable("the form has lost its key"))?;
+    Ok(app.submit(key))
+}
+
+/// The revision that a form was based on; what is no number is never current.
+pub fn revision(text: &str) -> Revision {
+    Revision(text.parse().unwrap_or(-1))
+}
+
+/// What is wrong with a form, field by field, in the order of the page.
+#[derive(Clone, Debug, Default, PartialEq, Eq)]
+pub struct Complaints(Vec<Complaint>);
+
+/// What is wrong with one field.
+#[derive(Clone, Debug, PartialEq, Eq)]
+pub struct Complaint {
+    /// Name of the field.
+    pub field: String,
+    /// What it is called on the page.
+    pub label: String,
+    /// What to give instead.
+    pub message: String,
+}
+
+impl Complaint {
+    /// The id of the field, for the link to it.
+    pub fn id(&self) -> String {
+        id_of(&self.field)
+    }
+}
+
+/// The id of a field: its name without brackets.
+pub fn id_of(field: &str) -> String {
+    field.replace('[', "-").replace(']', "")
+}
+
+impl Complaints {
+    /// Adds what is wrong with a field.
+    pub fn add(&mut self, field: impl Into<String>, label: impl Into<String>, message: impl Into<String>) {
+        self.0.push(Complaint { field: field.into(), label: label.into(), message: message.into() });
+    }
+
+    /// Keeps a value, or notes what is wrong and gives `None`.
+    pub fn take<T>(&mut self, field: &str, label: &str, read: Result<T, String>) -> Option<T> {
+        read.map_err(|message| self.add(field, label, message)).ok()
+    }
+
+    /// Whether nothing is wrong.
+    pub fn is_empty(&self) -> bool {
+        self.0.is_empty()
+    }
+
+    /// All of them.
+    pub fn all(&self) -> &[Complaint] {
+        &self.0
+    }
+
+    /// What is wrong with a field; empty if nothing is.
+    pub fn of(&self, field: &str) -> &str {
+        self.0.iter().find(|complaint| complaint.field == field).map_or("", |complaint| complaint.message.as_str())
+    }
+}
+
+/// A page.
+pub fn page(template: &impl Template) -> Result<Response, Error> {
+    Ok(Html(template.render()?).into_response())
+}
+
+/// A page that shows a form again, as typed, with what is wrong.
+pub fn page_again(template: &impl Template) -> Result<Response, Error> {
+    Ok((StatusCode::UNPROCESSABLE_ENTITY, Html(template.render()?)).into_response())
+}
+
+/// A page that shows a form again because what it was based on has changed.
+pub fn page_of_conflict(template: &impl Template) -> Result<Response, Error> {
+    Ok((StatusCode::CONFLICT, Html(template.render()?)).into_response())
+}
+
+/// After a form was taken: on to a page, so that a reload sends nothing twice.
+pub fn on_to(address: &str) -> Response {
+    Redirect::to(address).into_response()
+}
+
+/// Text of a field, with what is wrong with its length.
+pub fn text(typed: &str, most: usize) -> Result<String, String> {
+    let text = typed.trim();
+    if text.chars().count() > most {
+        Err(format!("give at most {most} characters"))
+    } else if text.chars().any(|letter| letter.is_control() && letter != '\n' && letter != '\r') {
+        Err("leave out control characters".to_owned())
+    } else {
+        Ok(text.to_owned())
+    }
+}

@@ -1,0 +1,96 @@
+//! The pages: thin. A handler reads, asks the store or the engine, and answers.
+//!
+//! To add a page: its address goes into `paths.rs`; a file of the noun gets a struct with
+//! `#[derive(Template)]`, its first field `frame: Frame`, and a handler that returns
+//! `Result<Response, Error>`; `page(&struct)` renders it. A form struct has only `String` fields,
+//! among them `key` and `revision`; its `read` gives values or `Complaints`, and with complaints the
+//! page is shown again as typed by `page_again`. The route goes into [`router`]; what needs a
+//! signed-in person takes `Installer`.
+
+pub mod accept;
+mod app;
+mod assets;
+mod assumptions;
+mod back;
+mod book;
+mod clock;
+mod conflict;
+mod error;
+mod firm;
+mod first_day;
+mod forms;
+mod frame;
+mod headers;
+mod health;
+mod paths;
+mod session;
+mod sign_in;
+mod site;
+
+use axum::Router;
+use axum::extract::DefaultBodyLimit;
+use axum::middleware::{from_fn, from_fn_with_state};
+use axum::routing::{get, post};
+use tower_http::catch_panic::CatchPanicLayer;
+use tower_http::compression::CompressionLayer;
+use tower_http::csrf::CsrfLayer;
+
+pub use app::{App, Config};
+pub use clock::Clock;
+pub use paths::Paths;
+
+/// Most bytes of a form.
+const FORM_BYTES: usize = 256 * 1024;
+
+/// Every route with its layers.
+pub fn router(app: App) -> Router {
+    let routes = public().merge(signed_in(&app));
+    let base = app.config.base().to_owned();
+    let routes = if base.is_empty() { routes } else { Router::new().nest(&base, routes) };
+    routes
+        .fallback(error::not_here)
+        .layer(DefaultBodyLimit::max(FORM_BYTES))
+        .layer(from_fn_with_state(app.clone(), session::refuse_foreign))
+        .layer(CsrfLayer::new().with_insecure_bypass(offers_are_keyed))
+        .layer(CatchPanicLayer::custom(error::caught))
+        .layer(from_fn_with_state(app.clone(), error::show))
+        .layer(from_fn(headers::add))
+        .layer(CompressionLayer::new())
+        .with_state(app)
+}
+
+/// What anybody may ask for.
+fn public() -> Router<App> {
+    Router::new()
+        .route("/healthz", get(health::is_up))
+        .route("/readyz", get(health::is_ready))
+        .route("/robots.txt", get(assets::robots))
+        .route("/static/{name}", get(assets::asset))
+        .route("/begin", get(first_day::show).post(first_day::begin))
+        .route("/in", get(sign_in::show).post(sign_in::sign_in))
+}
+
+/// What only a signed-in person may ask for.
+fn signed_in(app: &App) -> Router<App> {
+    Router::new()
+        .route("/", get(book::show))
+        .route("/out", post(sign_in::sign_out))
+        .route("/job/new", post(book::start))
+        .route("/job/{id}", get(site::first_step))
+        .route("/job/{id}/site", get(site::show).post(site::save))
+        .route("/job/{id}/copy", post(book::copy))
+        .route("/job/{id}/state", post(book::set_state))
+        .route("/job/{id}/bin", get(book::ask_to_bin).post(book::bin))
+        .route("/job/{id}/restore", post(book::restore))
+        .route("/job/{id}/assumptions", get(assumptions::show).post(assumptions::save))
+        .route("/firm", get(firm::show).post(firm::save))
+        .route("/back", get(back::show))
+        .route("/back/backup", post(back::back_up))
+        .layer(from_fn_with_state(app.clone(), session::require))
+}
+
+/// A customer's answer needs the key in its address and no cookie, so it may come from anywhere:
+/// a page that says nobody where it was opened sends no origin on plain http.
+fn offers_are_keyed(_: &axum::http::Method, address: &axum::http::Uri) -> bool {
+    address.path().contains("/o/")
+}
