@@ -236,6 +236,9 @@ assumptions! {
     /// Battery cable drop that is refused.
     dc_drop_limit = |_: &Properties| 0.05, "Voltage drop on battery cables never to be exceeded", "", 0.002..=0.2,
         "no single international figure; 5 % of nominal", OurRule;
+    /// Drop on the unit's battery cable while the hardest motor starts.
+    dc_surge_drop_limit = |_: &Properties| 0.05, "Voltage drop allowed on the battery cable while a motor starts", "", 0.005..=0.3,
+        "a thin lead must not pull the unit below its cut-off; 5 % of nominal is our limit", OurRule;
     /// Supply cable drop allowed.
     ac_drop_limit = |_: &Properties| 0.03, "Voltage drop allowed on cables to the board and the mains", "", 0.002..=0.1,
         "IEC 60364-5-52 Annex G: 3 % for lighting from a public supply", Read;

@@ -27,7 +27,7 @@ pub const LEAST_FOR_FAULT: Rule = Rule {
 pub const SIZE: Rule = Rule {
     symbol: "S",
     name: "Cross-section of a conductor",
-    formula: "thinnest of the table that the device protects, S ≥ S_fault, drop within u_target",
+    formula: "thinnest of the table that the device protects, S ≥ S_fault, drop within u_target, at a start within u_start",
     unit: "mm²",
     source: "sizes of IEC 60228",
     checked: Checked::Read,
@@ -135,6 +135,15 @@ pub const DROP_SHARE: Rule = Rule {
     unit: "",
     source: "definition",
     checked: Checked::Derived,
+};
+
+pub const START_DROP: Rule = Rule {
+    symbol: "u_I,start",
+    name: "Drop while the hardest motor starts, over the nominal volts",
+    formula: "u_I,start = I_start · R / U, no more than u_start",
+    unit: "",
+    source: "Ohm's law; the limit is ours",
+    checked: Checked::OurRule,
 };
 
 pub const BREAKING: Rule = Rule {

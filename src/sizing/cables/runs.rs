@@ -2,7 +2,7 @@
 
 use super::paper::Paper;
 use crate::sizing::assumptions::Assumptions;
-use crate::sizing::design::{Bank, Charger, Demand, Inverter, Run};
+use crate::sizing::design::{Bank, Charger, Demand, Inverter, Run, StartNeed};
 use crate::sizing::sheet::{Checked, Rule, Sheet};
 use crate::sizing::survey::Survey;
 use crate::units::{Amps, Fraction, Kiloamps, Metres, Watts};
@@ -35,6 +35,15 @@ pub struct DropBounds {
     pub limit: f64,
 }
 
+/// What a run carries for the seconds of a motor's start.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct Start {
+    /// Current of the hardest start.
+    pub current: Amps,
+    /// Share of the nominal volts that it may lose.
+    pub limit: f64,
+}
+
 /// What a run must carry, and how far.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub struct Plan {
@@ -54,6 +63,8 @@ pub struct Plan {
     pub drop: DropBounds,
     /// What one conductor may carry, where there is a bound besides its capacity.
     pub per_conductor: Option<Amps>,
+    /// The hardest motor's start, where it comes through this run.
+    pub start: Option<Start>,
 }
 
 impl Given<'_> {
@@ -84,7 +95,21 @@ impl Given<'_> {
         let values = [("I_peak", self.bank.peak_current.0, "A"), ("I_charge", self.charger.current.0, "A")];
         let current = Amps(paper.line("design_current_a", &BANK_CURRENT, &values, self.bank_current().0));
         let fault = self.bank_fault(&mut paper);
-        self.battery_plan(Run::BankToInverter, self.survey.runs.bank_to_inverter, current, fault)
+        let start = self.hardest_start(&mut paper);
+        let length = self.survey.runs.bank_to_inverter;
+        Plan { start, ..self.battery_plan(Run::BankToInverter, length, current, fault) }
+    }
+
+    /// What the hardest motor's start draws at the cut-off, where a battery's current is highest; the unit gives no
+    /// more than its surge. `None` without motors.
+    fn hardest_start(&self, paper: &mut Paper) -> Option<Start> {
+        let motors = self.demand.starts.iter().filter(|need| need.kind.is_motor()).map(StartNeed::needed);
+        let given = motors.map(|power| power.real * (self.inverter.surge / power.apparent()).min(1.0));
+        let hardest = given.reduce(Watts::max)?;
+        let (drawn, cut_off) = (self.inverter.losses.drawn(hardest), self.bank.cut_off);
+        let values = [("P_start", hardest.0, "W"), ("P_dc", drawn.0, "W"), ("V_cut-off", cut_off.0, "V")];
+        let current = Amps(paper.line("start_current_a", &START_CURRENT, &values, (drawn / cut_off).0));
+        Some(Start { current, limit: self.assumptions.dc_surge_drop_limit })
     }
 
     fn charger_to_bank(&self, length: Metres, sheet: &mut Sheet) -> Plan {
@@ -113,7 +138,7 @@ impl Given<'_> {
         let drop = DropBounds { target, warn, limit };
         let nominal = self.bank.bus.volts().0;
         let per_conductor = Some(Amps(self.assumptions.bus_current_limit_a));
-        Plan { run, length, current, nominal, power_factor: Fraction::ONE, fault, drop, per_conductor }
+        Plan { run, length, current, nominal, power_factor: Fraction::ONE, fault, drop, per_conductor, start: None }
     }
 
     /// The board's cable carries what the unit can give, not only what is on the list today.
@@ -150,7 +175,7 @@ impl Given<'_> {
     fn supply_plan(&self, run: Run, length: Metres, current: Amps, power_factor: Fraction, fault: Kiloamps) -> Plan {
         let nominal = self.survey.site.supply.0;
         let drop = self.supply_drop(length);
-        Plan { run, length, current, nominal, power_factor, fault, drop, per_conductor: None }
+        Plan { run, length, current, nominal, power_factor, fault, drop, per_conductor: None, start: None }
     }
 
     /// The allowed drop runs from the mains to the board, so both runs share it by their lengths.
@@ -172,6 +197,15 @@ const BANK_CURRENT: Rule = Rule {
     symbol: "I_b",
     name: "Design current",
     formula: "I_b = I_peak, or I_charge where it is larger and takes the same cable",
+    unit: "A",
+    source: "a battery's current is highest at its lowest volts",
+    checked: Checked::Derived,
+};
+
+const START_CURRENT: Rule = Rule {
+    symbol: "I_start",
+    name: "Battery current at cut-off while the hardest motor starts",
+    formula: "I_start = P_dc(P_start) / V_cut-off, P_start no more than the unit's surge gives",
     unit: "A",
     source: "a battery's current is highest at its lowest volts",
     checked: Checked::Derived,

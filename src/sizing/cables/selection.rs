@@ -1,7 +1,7 @@
 //! The thinnest cable of the table that meets everything asked of a run.
 
 use super::laying::{Laying, Size};
-use super::runs::Plan;
+use super::runs::{Plan, Start};
 use super::voltage_drop::{alternating, direct, loop_reactance, loop_resistance};
 use crate::sizing::protection::{CONTINUOUS, Device};
 use crate::sizing::survey::Code;
@@ -45,7 +45,7 @@ pub struct Candidate {
 }
 
 impl Question<'_> {
-    /// The first that carries the current, bears the fault and keeps the target of the drop: single conductors
+    /// The first that carries the current, bears the fault and keeps the drop, running and starting: single conductors
     /// before parallel ones, thin before thick. Failing that the thickest there is, which comes nearest; the
     /// findings say what it lacks.
     pub fn answer(&self) -> Option<Candidate> {
@@ -75,7 +75,18 @@ impl Question<'_> {
     }
 
     fn is_sound(&self, one: &Candidate) -> bool {
-        self.carries(one) && self.bears_fault(one) && one.drop_share <= self.plan.drop.target
+        let keeps_drop = one.drop_share <= self.plan.drop.target && self.keeps_start(one);
+        self.carries(one) && self.bears_fault(one) && keeps_drop
+    }
+
+    /// Whether the hardest motor's start loses no more than it may.
+    fn keeps_start(&self, one: &Candidate) -> bool {
+        self.plan.start.is_none_or(|start| self.start_drop_share(one, start) <= start.limit)
+    }
+
+    /// What a start loses over both conductors, over the nominal volts.
+    pub fn start_drop_share(&self, one: &Candidate, start: Start) -> f64 {
+        direct(start.current, one.loop_resistance) / self.plan.nominal
     }
 
     /// Whether it carries the current and the device protects it; where the trade has no device, whether it would

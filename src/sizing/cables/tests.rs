@@ -3,10 +3,11 @@ mod laws;
 use super::*;
 use crate::sizing::battery_bank::example;
 use crate::sizing::charger;
-use crate::sizing::design::Run;
+use crate::sizing::design::{Run, StartNeed};
 use crate::sizing::finding::{Finding, Severity};
-use crate::sizing::survey::{Chemistry, Conductor, Insulation, Method};
-use crate::units::{Amps, Celsius, Kiloamps, Metres, Watts};
+use crate::sizing::load_survey::Power;
+use crate::sizing::survey::{Chemistry, Conductor, Insulation, Method, StartKind};
+use crate::units::{Amps, Celsius, Kiloamps, Metres, Seconds, Watts};
 
 /// The shop, its loads, unit, bank and charger; a test changes what it is about.
 #[derive(Clone, Debug)]
@@ -111,6 +112,47 @@ fn a_battery_lead_is_sized_for_the_current_at_cut_off_by_hand() {
     assert!((cable.voltage_drop_share - 0.26514 / 24.0).abs() < 1e-6);
     assert_eq!((cable.fault_current, cable.protective_conductor), (Kiloamps(4.0), None));
     assert!(cable.device.contains("terminal fuse") || cable.device.contains("ANL"), "{}", cable.device);
+}
+
+/// The shop with a motor that starts like this beside nothing else.
+fn starting(watts: f64, volt_amps: f64) -> Case {
+    let mut case = Case::drawn_at(20.0);
+    let reactive = crate::units::Vars((volt_amps.powi(2) - watts.powi(2)).sqrt());
+    let start = Power { real: Watts(watts), reactive, ..Power::default() };
+    let (kind, lasts) = (StartKind::Compressor, Seconds(0.5));
+    case.demand.starts = vec![StartNeed { row: 0, kind, lasts, rest: Power::default(), start }];
+    case
+}
+
+#[test]
+fn a_battery_lead_is_thick_enough_for_the_hardest_start() {
+    let cable = starting(1000.0, 1400.0).cable(Run::BankToInverter);
+    // By hand: 20 + 1000 + 0.12·1000²/1600 W are 1095 W, at 10.5 V 104.3 A; 5 % of 12 V leave 5.75 mΩ for 4 m:
+    // 1.438 Ω/km, at 90 °C 1.128 Ω/km cold: 25 mm² with 0.795, where 20 A running ask for 10 mm² only.
+    assert_eq!(metric(&cable), 25.0, "{cable:?}");
+    assert!(metric(&Case::drawn_at(20.0).cable(Run::BankToInverter)) < 25.0);
+}
+
+#[test]
+fn a_start_that_the_unit_cannot_give_asks_for_no_thicker_lead_than_one_it_can() {
+    let (within, beyond) = (starting(2800.0, 4000.0), starting(28_000.0, 40_000.0));
+    assert_eq!(within.cable(Run::BankToInverter), beyond.cable(Run::BankToInverter));
+}
+
+#[test]
+fn current_and_drop_of_the_start_stand_on_the_sheet() {
+    let case = starting(1000.0, 1400.0);
+    let (_, sheet) = case.answer();
+    let figure = |name: &str| {
+        let figure = ["cables.bank_to_inverter", name].join(".");
+        sheet.working.iter().find(|line| line.figure == figure).map(|line| line.result)
+    };
+    let current = (20.0 + 1000.0 + 0.12 * 1000.0 * 1000.0 / 1600.0) / case.bank.cut_off.0;
+    assert!((figure("start_current_a").expect("a motor starts") - current).abs() < 1e-9);
+    let drop = current * case.cable(Run::BankToInverter).loop_resistance.0 / 12.0;
+    assert!((figure("start_drop_share").expect("a motor starts") - drop).abs() < 1e-12 && drop <= 0.05);
+    let (_, still) = Case::shop().answer();
+    assert!(!still.working.iter().any(|line| line.figure.contains("start_")), "nothing starts here");
 }
 
 #[test]

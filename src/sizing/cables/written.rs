@@ -14,6 +14,7 @@ pub(super) fn write_down(question: &Question, chosen: &Candidate, paper: &mut Pa
     write_size(question, chosen, paper);
     write_capacity(question, chosen, paper);
     write_drop(plan, chosen, paper);
+    write_start_drop(question, chosen, paper);
     if let Some(rating) = device.rating {
         let carried = carried(plan, question.laying.code);
         let values = [("I", carried.0, "A"), ("I_z", chosen.capacity.0, "A")];
@@ -69,4 +70,15 @@ fn write_drop(plan: &Plan, chosen: &Candidate, paper: &mut Paper) {
     let drop = paper.line("voltage_drop_v", rule, given, chosen.drop);
     let values = [("ΔU", drop, "V"), ("U", plan.nominal, "V")];
     paper.line("voltage_drop_share", &rules::DROP_SHARE, &values, chosen.drop_share);
+}
+
+fn write_start_drop(question: &Question, chosen: &Candidate, paper: &mut Paper) {
+    let Some(start) = question.plan.start else { return };
+    let values = [
+        ("I_start", start.current.0, "A"),
+        ("R", chosen.loop_resistance.0, "Ω"),
+        ("U", question.plan.nominal, "V"),
+        ("u_start", start.limit, ""),
+    ];
+    paper.line("start_drop_share", &rules::START_DROP, &values, question.start_drop_share(chosen, start));
 }

@@ -80,4 +80,16 @@ proptest! {
             prop_assert!(rank(easy) <= rank(hard), "{easy:?} {hard:?}");
         }
     }
+
+    #[test]
+    fn a_harder_start_never_gets_a_thinner_cable_and_its_drop_is_kept(
+        case in any_case(), watts in 10.0..2000.0_f64, more in 1.0..2.0_f64,
+    ) {
+        let started = |watts: f64| Case { demand: starting(watts, 1.4 * watts).demand, ..case.clone() };
+        let (soft, hard) = (started(watts).cable(Run::BankToInverter), started(watts * more).cable(Run::BankToInverter));
+        prop_assert!(rank(&case.cable(Run::BankToInverter)) <= rank(&soft) && rank(&soft) <= rank(&hard));
+        let (_, sheet) = started(watts).answer();
+        let drop = sheet.working.iter().find(|line| line.figure.ends_with("start_drop_share")).expect("it starts").result;
+        prop_assert!(drop <= 0.05 || soft.parallel == selection::MOST_IN_PARALLEL, "{drop} {soft:?}");
+    }
 }
