@@ -1,5 +1,6 @@
 //! Whole designs: their sheets, the laws they keep, and one of them by hand.
 
+mod flat_by_hand;
 mod laws;
 mod sheet;
 mod surveys;
