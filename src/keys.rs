@@ -3,6 +3,7 @@
 use std::fmt;
 
 use serde::{Deserialize, Serialize};
+use sha2::{Digest, Sha256};
 
 /// How often a record was saved; a change names the one that it was based on.
 #[derive(Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Serialize, Deserialize)]
@@ -29,6 +30,13 @@ impl OneTimeKey {
     pub fn read(text: &str) -> Option<Self> {
         let fits = text.len() == 26 && text.bytes().all(|byte| byte.is_ascii_lowercase() || byte.is_ascii_digit());
         fits.then(|| Self(text.to_owned()))
+    }
+
+    /// The key of a second write that the same submit causes; always the same one.
+    pub fn next(&self) -> Self {
+        let mut bits = [0; 16];
+        bits.copy_from_slice(&Sha256::digest(&self.0)[..16]);
+        Self::from_random(bits)
     }
 
     /// Its letters.

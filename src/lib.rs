@@ -5,6 +5,7 @@
 
 pub mod accounts;
 pub mod cli;
+pub mod demo;
 pub mod documents;
 pub mod jobs;
 pub mod keys;

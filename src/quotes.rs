@@ -5,6 +5,7 @@ pub mod price;
 mod quantity;
 pub mod share_key;
 pub mod sheet;
+pub mod typed;
 
 pub use quantity::Quantity;
 

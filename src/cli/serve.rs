@@ -7,6 +7,7 @@ use std::process::ExitCode;
 use anyhow::Context;
 use tokio::net::TcpListener;
 
+use crate::demo;
 use crate::store::Store;
 use crate::web::{self, App, Clock, Config};
 
@@ -70,13 +71,27 @@ async fn serve(arguments: Arguments) -> anyhow::Result<()> {
 async fn greet(app: &App, demo: bool, address: &str) -> anyhow::Result<()> {
     let empty = app.store.is_first_day().await?;
     if empty {
-        anyhow::ensure!(!demo, "the made-up firm is not there yet");
+        if demo {
+            return made_up(app).await;
+        }
         let code = app.open_first_day()?;
         println!(
             "Nobody has an account yet. Open {address}{}/begin and enter this set-up code: {code}",
             app.config.base()
         );
+    } else if demo {
+        println!("There is a firm in this folder already: nothing made up was added.");
     }
+    Ok(())
+}
+
+/// Fills the empty folder with a made-up firm; its password is drawn now and stored nowhere.
+async fn made_up(app: &App) -> anyhow::Result<()> {
+    let password = web::random_text::<10>()?;
+    let mut salt = [0; 16];
+    getrandom::fill(&mut salt)?;
+    demo::fill(&app.store, app.clock.now(), &password, salt, app.secret).await?;
+    println!("Filled with a made-up firm. Sign in as {} with the password {password}", demo::EMAIL);
     Ok(())
 }
 

@@ -7,6 +7,7 @@ use tokio::sync::Semaphore;
 
 use super::clock::Clock;
 use super::paths::Paths;
+use super::share::wrong_links::WrongLinks;
 use crate::keys::OneTimeKey;
 use crate::store::{Once, Store};
 
@@ -48,6 +49,8 @@ pub struct App {
     pub hashing: Arc<Semaphore>,
     /// Drawn at the start and never stored: customers' keys are made with it.
     pub secret: [u8; 32],
+    /// Wrong links, counted by address.
+    pub wrong_links: Arc<WrongLinks>,
 }
 
 impl App {
@@ -64,6 +67,7 @@ impl App {
             set_up_code: Arc::default(),
             hashing: Arc::new(Semaphore::new(1)),
             secret,
+            wrong_links: Arc::default(),
         })
     }
 

@@ -13,6 +13,7 @@ mod assets;
 mod assumptions;
 mod back;
 mod book;
+mod client;
 mod clock;
 mod conflict;
 mod error;
@@ -22,8 +23,12 @@ mod forms;
 mod frame;
 mod headers;
 mod health;
+mod past;
 mod paths;
+mod price;
+mod send;
 mod session;
+mod share;
 mod sign_in;
 mod site;
 
@@ -35,16 +40,17 @@ use tower_http::catch_panic::CatchPanicLayer;
 use tower_http::compression::CompressionLayer;
 use tower_http::csrf::CsrfLayer;
 
-pub use app::{App, Config};
+pub use app::{App, Config, random_text};
 pub use clock::Clock;
 pub use paths::Paths;
+pub use price::case::Case;
 
 /// Most bytes of a form.
 const FORM_BYTES: usize = 256 * 1024;
 
 /// Every route with its layers.
 pub fn router(app: App) -> Router {
-    let routes = public().merge(signed_in(&app));
+    let routes = public().merge(share::routes()).merge(signed_in(&app));
     let base = app.config.base().to_owned();
     let routes = if base.is_empty() { routes } else { Router::new().nest(&base, routes) };
     routes
@@ -83,6 +89,11 @@ fn signed_in(app: &App) -> Router<App> {
         .route("/job/{id}/bin", get(book::ask_to_bin).post(book::bin))
         .route("/job/{id}/restore", post(book::restore))
         .route("/job/{id}/assumptions", get(assumptions::show).post(assumptions::save))
+        .route("/job/{id}/price", get(price::show).post(price::save))
+        .route("/job/{id}/send", get(send::show).post(send::make_link))
+        .route("/job/{id}/sheet/{version}", get(send::preview))
+        .route("/job/{id}/link/{link}/cancel", post(send::cancel))
+        .route("/job/{id}/past", get(past::show))
         .route("/firm", get(firm::show).post(firm::save))
         .route("/back", get(back::show))
         .route("/back/backup", post(back::back_up))

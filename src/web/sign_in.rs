@@ -80,7 +80,7 @@ async fn known(app: &App, form: &SignInForm) -> Result<Option<PersonId>, Error> 
         return Err(Error::TooMany);
     }
     let person = app.store.person_by_email(&form.email).await?;
-    Ok(fits(app, form.password.clone(), person).await?)
+    fits(app, form.password.clone(), person).await
 }
 
 /// Hashing is costly: one at a time, on a thread of its own; the surplus is turned away.

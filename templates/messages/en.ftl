@@ -180,6 +180,10 @@ kept-next-no = { $firm } will not start any work. Call if you want something cha
 kept-back = Look at the sheet again
 kept-print = Keep a copy: use your browser's print command.
 
+## The message that carries the link
+
+message-body = Here is the offer of { $firm }: { $address }
+
 ## Sheets that are no longer open
 
 gone-ended-title = This sheet has ended
