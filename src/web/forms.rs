@@ -95,6 +95,11 @@ impl Complaints {
         &self.0
     }
 
+    /// Whether something is wrong with a field whose name begins so.
+    pub fn touch(&self, beginning: &str) -> bool {
+        self.0.iter().any(|complaint| complaint.field.starts_with(beginning))
+    }
+
     /// What is wrong with a field; empty if nothing is.
     pub fn of(&self, field: &str) -> &str {
         self.0.iter().find(|complaint| complaint.field == field).map_or("", |complaint| complaint.message.as_str())

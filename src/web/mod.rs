@@ -31,6 +31,7 @@ mod session;
 mod share;
 mod sign_in;
 mod site;
+mod survey;
 
 use axum::Router;
 use axum::extract::DefaultBodyLimit;
@@ -84,6 +85,9 @@ fn signed_in(app: &App) -> Router<App> {
         .route("/job/new", post(book::start))
         .route("/job/{id}", get(site::first_step))
         .route("/job/{id}/site", get(site::show).post(site::save))
+        .route("/job/{id}/list", get(survey::list::show).post(survey::list::save))
+        .route("/job/{id}/cut", get(survey::cut::show).post(survey::cut::save))
+        .route("/job/{id}/runs", get(survey::runs::show).post(survey::runs::save))
         .route("/job/{id}/copy", post(book::copy))
         .route("/job/{id}/state", post(book::set_state))
         .route("/job/{id}/bin", get(book::ask_to_bin).post(book::bin))
