@@ -143,7 +143,9 @@ pub async fn save(
 
 fn cut_page(app: &App, installer: &Installer, id: JobId, mut form: CutForm) -> Result<CutPage, Error> {
     let frame = Frame::of_step(app, installer, id, StepOf::Cut, "Power cut")?;
-    (0..RATINGS).for_each(|at| drop(form.ratings.entry(at).or_default()));
+    for at in 0..RATINGS {
+        form.ratings.entry(at).or_default();
+    }
     let here = frame.paths.cut(id);
     let (complaints, conflict) = (Complaints::default(), Conflict::default());
     Ok(CutPage { reload: here.clone(), here, frame, form, complaints, conflict })

@@ -61,7 +61,6 @@ pub struct Count {
 struct ListPage {
     frame: Frame,
     here: String,
-    next: String,
     form: ListForm,
     slips: BTreeMap<u32, String>,
     tally: Option<Tally>,
@@ -214,7 +213,6 @@ fn list_page(app: &App, installer: &Installer, job: &Job, mut form: ListForm) ->
     }
     Ok(ListPage {
         here: frame.paths.list(job.id),
-        next: frame.paths.cut(job.id),
         reload: frame.paths.list(job.id),
         slips: BTreeMap::new(),
         tally: tally(&job.draft, frame.numbers),
