@@ -7,6 +7,7 @@ pub mod accounts;
 pub mod cli;
 pub mod demo;
 pub mod documents;
+pub mod drawing;
 pub mod jobs;
 pub mod keys;
 pub mod money;

@@ -16,6 +16,7 @@ mod book;
 mod client;
 mod clock;
 mod conflict;
+mod design;
 mod error;
 mod firm;
 mod first_day;
@@ -88,6 +89,9 @@ fn signed_in(app: &App) -> Router<App> {
         .route("/job/{id}/list", get(survey::list::show).post(survey::list::save))
         .route("/job/{id}/cut", get(survey::cut::show).post(survey::cut::save))
         .route("/job/{id}/runs", get(survey::runs::show).post(survey::runs::save))
+        .route("/job/{id}/needs", get(design::needs::show))
+        .route("/job/{id}/hours", get(design::hours::show))
+        .route("/job/{id}/working", get(design::working::show))
         .route("/job/{id}/copy", post(book::copy))
         .route("/job/{id}/state", post(book::set_state))
         .route("/job/{id}/bin", get(book::ask_to_bin).post(book::bin))

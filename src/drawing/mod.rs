@@ -1,0 +1,4 @@
+//! Pictures by the server: scales and marks here, the SVG itself in a template.
+
+pub mod chart;
+pub mod day;
