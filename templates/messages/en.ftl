@@ -101,7 +101,6 @@ fit-labour = Work
 fit-subtotal = Before tax
 fit-tax = Tax, { $percent }{"\u00A0"}%
 fit-total = Total
-price-heading = Price
 price-ends = This price holds until { $date }.
 price-note = A word from us
 

@@ -12,21 +12,24 @@ pub struct Fact {
     pub name: &'static str,
     /// What it stands at.
     pub value: String,
-    /// Where it is changed; comes back here.
+    /// Where it is changed or seen.
     pub change: String,
+    /// Whether it can be changed there.
+    pub is_input: bool,
 }
 
 /// The survey and the design in a few lines.
 pub fn facts(case: &Case, paths: &Paths) -> Vec<Fact> {
     let id = case.job.id;
     let back = |address: String| format!("{address}?back=price");
+    let input = |name, value, change| Fact { name, value, change: back(change), is_input: true };
     let contact = &case.job.contact;
     let customer = [contact.customer.as_str(), &contact.place].into_iter().filter(|part| !part.is_empty());
     let mut facts = vec![
-        Fact { name: "Site", value: customer.collect::<Vec<_>>().join(", "), change: back(paths.site(id)) },
-        Fact { name: "Stay-on list", value: list(case), change: back(paths.list(id)) },
-        Fact { name: "Power cut", value: cut(case), change: back(paths.cut(id)) },
-        Fact { name: "Cable runs", value: runs(case), change: back(paths.runs(id)) },
+        input("Site", customer.collect::<Vec<_>>().join(", "), paths.site(id)),
+        input("Stay-on list", list(case), paths.list(id)),
+        input("Power cut", cut(case), paths.cut(id)),
+        input("Cable runs", runs(case), paths.runs(id)),
     ];
     for fact in &mut facts {
         if fact.value.is_empty() {
@@ -34,7 +37,12 @@ pub fn facts(case: &Case, paths: &Paths) -> Vec<Fact> {
         }
     }
     if let Some((survey, design)) = &case.designed {
-        facts.push(Fact { name: "What it needs", value: needs(case, survey, design), change: paths.needs(id) });
+        facts.push(Fact {
+            name: "What it needs",
+            value: needs(case, survey, design),
+            change: paths.needs(id),
+            is_input: false,
+        });
     }
     facts
 }
