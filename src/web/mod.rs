@@ -105,6 +105,7 @@ fn signed_in(app: &App) -> Router<App> {
         .route("/firm", get(firm::show).post(firm::save))
         .route("/back", get(back::show))
         .route("/back/backup", post(back::back_up))
+        .layer(from_fn_with_state(app.clone(), price::come_back))
         .layer(from_fn_with_state(app.clone(), session::require))
 }
 

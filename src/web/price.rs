@@ -1,6 +1,7 @@
 //! Price up: a last look at the survey, parts with prices, and the sheet made of them.
 
 pub mod case;
+mod come_back;
 mod facts;
 pub mod form;
 
@@ -9,6 +10,7 @@ use axum::extract::{Path, State};
 use axum::response::Response;
 
 use self::case::Case;
+pub use self::come_back::come_back;
 use self::facts::Fact;
 use self::form::{PriceForm, Row, SPARE};
 use super::app::App;

@@ -105,3 +105,16 @@ async fn ids_that_are_none_and_versions_of_other_jobs_are_not_here() {
         assert_eq!(ana.get(path).await.status(), StatusCode::NOT_FOUND, "{path}");
     }
 }
+
+#[tokio::test]
+async fn a_change_from_the_check_over_comes_back_to_it() {
+    let service = Service::start().await;
+    let ana = service.ana().await;
+    assert!(ana.page(PRICE).await.contains("/job/2/site?back=price"));
+    let form = ana.form("/job/2/site", "/job/2/site").await;
+    let changed = ana.send_from("/job/2/site?back=price", "/job/2/site", &form).await;
+    assert_eq!(changed.headers()["location"], PRICE);
+    let form = ana.form("/job/2/site", "/job/2/site").await;
+    let plain = ana.send("/job/2/site", &form, &[]).await;
+    assert_eq!(plain.headers()["location"], "/job/2/list");
+}

@@ -122,6 +122,13 @@ impl Browser {
         self.post(path, &fields.into_iter().collect::<Vec<_>>()).await
     }
 
+    /// Sends a form as it stands from a page, as its `Referer` says.
+    pub async fn send_from(&self, page: &str, path: &str, form: &BTreeMap<String, String>) -> Response {
+        let request = self.client.post(format!("{}{path}", self.address)).header("origin", &self.address);
+        let request = request.header("referer", format!("{}{page}", self.address));
+        request.header("sec-fetch-site", "same-origin").form(form).send().await.unwrap()
+    }
+
     /// Makes a sheet of a job and a link to it; the path of the link.
     pub async fn offer(&self, job: i64) -> String {
         let price = format!("/job/{job}/price");
