@@ -8,9 +8,9 @@ use crate::units::Hours;
 use crate::wording::Numbers;
 
 const LEFT: f64 = 58.0;
-const RIGHT: f64 = 700.0;
+const RIGHT: f64 = 430.0;
 const TOP: f64 = 26.0;
-const BOTTOM: f64 = 236.0;
+const BOTTOM: f64 = 216.0;
 
 #[derive(Template)]
 #[template(path = "design/day.svg.html", escape = "html")]
@@ -22,8 +22,6 @@ struct Picture {
     times: Vec<(String, String)>,
     average: String,
     peak: String,
-    peak_label: (String, String),
-    average_label: (String, String),
 }
 
 /// The SVG: average and highest power over 24 hours, the cut as a hatched band.
@@ -41,10 +39,6 @@ pub fn picture(demand: &Demand, autonomy: Hours, numbers: Numbers) -> Result<Str
         demand.sized_start,
         crate::wording::duration(autonomy),
     );
-    let label = |part: fn(&DayStretch) -> f64| {
-        let top = demand.day.iter().max_by(|a, b| part(a).total_cmp(&part(b)));
-        top.map_or_else(Default::default, |top| (x.place(top.from.hours().0), y.place(part(top))))
-    };
     Picture {
         title: "Load over the day, and the cut".to_owned(),
         told,
@@ -53,8 +47,6 @@ pub fn picture(demand: &Demand, autonomy: Hours, numbers: Numbers) -> Result<Str
         times: (0..=8).map(|n| f64::from(n) * 3.0).map(|hour| (x.place(hour), format!("{hour}"))).collect(),
         average: line(|stretch| stretch.average.0),
         peak: line(|stretch| stretch.peak.0),
-        peak_label: label(|stretch| stretch.peak.0),
-        average_label: label(|stretch| stretch.average.0),
     }
     .render()
 }

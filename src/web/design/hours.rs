@@ -34,7 +34,7 @@ pub async fn show(State(app): State<App>, installer: Installer, Path(id): Path<i
     let (demand, numbers, autonomy) = (&design.demand, frame.numbers, survey.outage.autonomy);
     let row = |stretch: &crate::sizing::design::DayStretch| {
         [
-            format!("{} to {}", stretch.from, stretch.to),
+            format!("{}–{}", stretch.from, stretch.to),
             numbers.with_unit(stretch.average.0, "W"),
             numbers.with_unit(stretch.peak.0, "W"),
             numbers.with_unit(stretch.peak_va.0, "VA"),

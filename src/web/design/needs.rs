@@ -51,7 +51,7 @@ struct Figure {
 struct Told {
     class: &'static str,
     weight: &'static str,
-    text: String,
+    texts: Vec<String>,
     cure: &'static str,
 }
 
@@ -86,7 +86,7 @@ pub async fn show(State(app): State<App>, installer: Installer, Path(id): Path<i
         verdict: verdict(survey, design),
         figures: figures(survey, design, numbers),
         changed: changed_since_last_sheet(&app, &case).await?,
-        findings: design.findings.iter().map(told).collect(),
+        findings: told(&design.findings),
         kit: kit(survey, design, numbers),
         starts: design.starts.iter().map(|start| start_told(start, numbers)).collect(),
         settings: settings(design, numbers),
@@ -136,10 +136,18 @@ fn figures(survey: &Survey, design: &Design, numbers: Numbers) -> Vec<Figure> {
     ]
 }
 
-fn told(finding: &Finding) -> Told {
-    let (class, weight) = wording::severity(finding.severity());
-    let told = wording::finding(finding);
-    Told { class, weight, text: told.text, cure: told.cure }
+/// Findings of one kind stand together under their one cure.
+fn told(findings: &[Finding]) -> Vec<Told> {
+    let mut kinds: Vec<Told> = Vec::new();
+    for finding in findings {
+        let (class, weight) = wording::severity(finding.severity());
+        let wording::Told { text, cure, .. } = wording::finding(finding);
+        match kinds.iter_mut().find(|kind| kind.cure == cure && kind.class == class) {
+            Some(kind) => kind.texts.push(text),
+            None => kinds.push(Told { class, weight, texts: vec![text], cure }),
+        }
+    }
+    kinds
 }
 
 /// Battery, its fuse and cable, inverter, then outwards.
@@ -230,8 +238,8 @@ fn cable_told(survey: &Survey, cable: &Cable, numbers: Numbers) -> Part {
     let fuse = match cable.fuse {
         Some(fuse) => format!(
             "{} {}, breaking {} or more",
-            cable.device,
             numbers.with_unit(fuse.0, "A"),
+            cable.device,
             numbers.with_unit(cable.breaking_capacity.0, "kA")
         ),
         None => "no fuse of the trade fits".to_owned(),
