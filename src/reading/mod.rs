@@ -6,6 +6,6 @@ mod quantities;
 
 pub use number::{Trouble, Typed, number_and_unit};
 pub use quantities::{
-    MOTOR_EFFICIENCY, Power, PowerUnit, WATTS_PER_HORSEPOWER, counted, hours, metres, money_minor, one_line, percent,
-    plain, power, temperature, whole,
+    MOTOR_EFFICIENCY, Power, PowerUnit, Refusal, Supplied, WATTS_PER_HORSEPOWER, WATTS_PER_METRIC_HORSEPOWER, counted,
+    hours, metres, money_minor, one_line, percent, plain, power, temperature, whole,
 };

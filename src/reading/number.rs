@@ -14,7 +14,7 @@ pub struct Typed {
 }
 
 /// Why a number could not be read.
-#[derive(Clone, Copy, Debug, PartialEq)]
+#[derive(Clone, Debug, PartialEq)]
 pub enum Trouble {
     /// Nothing was typed.
     Empty,
@@ -24,6 +24,8 @@ pub enum Trouble {
         small: f64,
         /// Read with a group of three.
         large: f64,
+        /// What stood behind it.
+        unit: String,
     },
     /// It is no number.
     Unreadable,
@@ -41,23 +43,41 @@ pub fn number_and_unit(text: &str, mark: DecimalMark) -> Result<Typed, Trouble> 
     let (sign, text) = text.strip_prefix('-').map_or((1.0, text.as_str()), |rest| (-1.0, rest.trim_start()));
     let end = text.find(|letter: char| !letter.is_ascii_digit() && !" .,'/".contains(letter)).unwrap_or(text.len());
     let (digits, unit) = text.split_at(end);
+    let unit: String = unit.chars().filter(|letter| *letter != ' ').collect();
     let number = match digits.split_once('/') {
-        Some((top, bottom)) => fraction(top, bottom)?,
+        Some((top, bottom)) => Digits::Read(fraction(top, bottom)?),
         None => decimal(&digits.replace([' ', '\''], ""), mark)?,
     };
-    Ok(Typed { number: sign * number + 0.0, unit: unit.chars().filter(|letter| *letter != ' ').collect() })
+    match number {
+        Digits::Read(number) => Ok(Typed { number: sign * number + 0.0, unit }),
+        Digits::Either(small) => Err(Trouble::Ambiguous { small: sign * small, large: sign * small * 1000.0, unit }),
+    }
+}
+
+/// Digits as they can be read.
+enum Digits {
+    /// One way.
+    Read(f64),
+    /// As this, or as a thousand times this.
+    Either(f64),
 }
 
 /// Lower case, one kind of space, minus and digit.
-fn tidy(text: &str) -> Result<String, Trouble> {
+pub(super) fn tidy(text: &str) -> Result<String, Trouble> {
     let text: String = text.trim().chars().take(LONGEST + 1).collect();
-    let text: String = text.nfkc().map(plain_letter).flat_map(char::to_lowercase).collect();
+    let text: String = text.chars().flat_map(parted).nfkc().map(plain_letter).flat_map(char::to_lowercase).collect();
     let text = text.trim().to_owned();
     match text.chars().count() {
         0 => Err(Trouble::Empty),
         length if length > LONGEST => Err(Trouble::Unreadable),
         _ => Ok(text),
     }
+}
+
+/// A letter as it is, or parted by a space where it is a fraction of its own: `1½` is one and a half.
+fn parted(letter: char) -> impl Iterator<Item = char> {
+    let is_fraction = matches!(letter, '¼'..='¾' | '\u{2150}'..='\u{215e}' | '\u{2189}');
+    is_fraction.then_some(' ').into_iter().chain([letter])
 }
 
 fn plain_letter(letter: char) -> char {
@@ -89,35 +109,36 @@ fn fraction(top: &str, bottom: &str) -> Result<f64, Trouble> {
 }
 
 /// Digits with marks.
-fn decimal(text: &str, mark: DecimalMark) -> Result<f64, Trouble> {
+fn decimal(text: &str, mark: DecimalMark) -> Result<Digits, Trouble> {
     let firm = match mark {
         DecimalMark::Point => '.',
         DecimalMark::Comma => ',',
     };
     let marks: Vec<char> = text.chars().filter(|letter| !letter.is_ascii_digit()).collect();
     let last = marks.last().copied();
-    match (marks.len(), last) {
+    let number = match (marks.len(), last) {
         (0, _) => parsed(text),
-        (1, Some(only)) => lone(text, only, firm),
+        (1, Some(only)) => return lone(text, only, firm),
         (_, Some(last)) if marks.iter().filter(|letter| **letter == last).count() == 1 => {
             let (whole, rest) = text.rsplit_once(last).ok_or(Trouble::Unreadable)?;
             parsed(&format!("{}.{rest}", ungrouped(whole)?))
         }
         (_, Some(last)) if marks.iter().all(|letter| *letter == last) => parsed(&ungrouped(text)?),
         _ => Err(Trouble::Unreadable),
-    }
+    };
+    number.map(Digits::Read)
 }
 
 /// One mark: decimal, or the sign of a group of three.
-fn lone(text: &str, mark: char, firm: char) -> Result<f64, Trouble> {
-    let (whole, rest) = text.split_once(mark).ok_or(Trouble::Unreadable)?;
+fn lone(text: &str, mark: char, firm: char) -> Result<Digits, Trouble> {
+    let (whole, rest) = text.split_once(mark).filter(|_| text.len() > 1).ok_or(Trouble::Unreadable)?;
     let small = parsed(&format!("{}.{rest}", if whole.is_empty() { "0" } else { whole }))?;
     let group = rest.len() == 3 && (1..=3).contains(&whole.len()) && !whole.starts_with('0');
-    match (group, mark == firm) {
-        (false, _) => Ok(small),
-        (true, false) => Ok(small * 1000.0),
-        (true, true) => Err(Trouble::Ambiguous { small, large: small * 1000.0 }),
-    }
+    Ok(match (group, mark == firm) {
+        (false, _) => Digits::Read(small),
+        (true, false) => Digits::Read(small * 1000.0),
+        (true, true) => Digits::Either(small),
+    })
 }
 
 /// Digits in groups of three, without the signs between them.
@@ -160,6 +181,9 @@ mod tests {
             ("0.500", Point, 0.5, ""),
             ("½ hp", Point, 0.5, "hp"),
             ("1 1/2 hp", Point, 1.5, "hp"),
+            ("1½ hp", Point, 1.5, "hp"),
+            ("10¾", Comma, 10.75, ""),
+            ("⅓", Point, 1.0 / 3.0, ""),
             ("1/2hp", Point, 0.5, "hp"),
             ("0,5 HP", Point, 0.5, "hp"),
             (".5 hp", Point, 0.5, "hp"),
@@ -178,9 +202,9 @@ mod tests {
 
     #[test]
     fn what_can_be_read_two_ways_is_asked_and_what_is_no_number_refused() {
-        let asked = Err(Trouble::Ambiguous { small: 1.5, large: 1500.0 });
-        assert_eq!(number_and_unit("1.500", DecimalMark::Point), asked);
-        assert_eq!(number_and_unit("1,500 W", DecimalMark::Comma), asked);
+        let asked = |unit: &str| Err(Trouble::Ambiguous { small: 1.5, large: 1500.0, unit: unit.to_owned() });
+        assert_eq!(number_and_unit("1.500", DecimalMark::Point), asked(""));
+        assert_eq!(number_and_unit("1,500 W", DecimalMark::Comma), asked("w"));
         for typed in ["about 5", "NaN", "inf", "--5", "1.2.3", "1,2,3", "1..5", "/2", "1/0", ".", "w"] {
             assert_eq!(number_and_unit(typed, DecimalMark::Point), Err(Trouble::Unreadable), "{typed:?}");
         }
@@ -199,6 +223,14 @@ mod tests {
                 Err(Trouble::Ambiguous { small, .. }) => prop_assert_eq!(small, number),
                 other => prop_assert!(false, "{} {:?}", shown, other),
             }
+        }
+
+        #[test]
+        fn what_stands_in_a_field_is_never_asked_about_again(thousandths in 0u32..2_000_000_000, comma: bool) {
+            let mark = if comma { DecimalMark::Comma } else { DecimalMark::Point };
+            let number = f64::from(thousandths) / 1000.0;
+            let read = number_and_unit(&Numbers::new(mark).typed(number), mark);
+            prop_assert_eq!(read.map(|typed| typed.number), Ok(number));
         }
 
         #[test]

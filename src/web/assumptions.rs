@@ -67,7 +67,7 @@ pub fn read(
         let limit = limits::Limit { lowest: entry.about.lowest, highest: entry.about.highest, unit: "", whole: false };
         let value = reading::plain(text, mark, limit);
         let value =
-            value.and_then(|value| trial.set(key, value).map(|()| value).map_err(|refused| refused.to_string()));
+            value.and_then(|value| trial.set(key, value).map(|()| value).map_err(|refused| refused.to_string().into()));
         set.extend(
             complaints
                 .take(&format!("assumptions[{key}]"), entry.about.name, value)

@@ -11,6 +11,7 @@ use serde::de::DeserializeOwned;
 use super::app::App;
 use super::error::Error;
 use crate::keys::{OneTimeKey, Revision};
+use crate::reading::Refusal;
 use crate::store::Once;
 
 /// A form as it arrived: every field is text.
@@ -60,6 +61,8 @@ pub struct Complaint {
     pub label: String,
     /// What to give instead.
     pub message: String,
+    /// What could have been meant, each as it would be typed.
+    pub readings: Vec<String>,
 }
 
 impl Complaint {
@@ -77,12 +80,18 @@ pub fn id_of(field: &str) -> String {
 impl Complaints {
     /// Adds what is wrong with a field.
     pub fn add(&mut self, field: impl Into<String>, label: impl Into<String>, message: impl Into<String>) {
-        self.0.push(Complaint { field: field.into(), label: label.into(), message: message.into() });
+        let refusal = Refusal::from(message.into());
+        self.refuse(&field.into(), &label.into(), refusal);
     }
 
     /// Keeps a value, or notes what is wrong and gives `None`.
-    pub fn take<T>(&mut self, field: &str, label: &str, read: Result<T, String>) -> Option<T> {
-        read.map_err(|message| self.add(field, label, message)).ok()
+    pub fn take<T>(&mut self, field: &str, label: &str, read: Result<T, impl Into<Refusal>>) -> Option<T> {
+        read.map_err(|refusal| self.refuse(field, label, refusal.into())).ok()
+    }
+
+    fn refuse(&mut self, field: &str, label: &str, refusal: Refusal) {
+        let Refusal { text: message, readings } = refusal;
+        self.0.push(Complaint { field: field.to_owned(), label: label.to_owned(), message, readings });
     }
 
     /// Whether nothing is wrong.

@@ -48,11 +48,15 @@ impl Numbers {
     }
 
     /// A number as it stands in a field, without groups.
+    ///
+    /// Three decimals get a zero behind them, since `1.500` would be asked about: 1.5 or 1500?
     pub fn typed(self, value: f64) -> String {
         let mark = if self.mark == DecimalMark::Point { "." } else { "," };
         let text = format!("{value:.6}");
         let text = text.trim_end_matches('0').trim_end_matches('.');
-        (if text == "-0" { "0" } else { text }).replace('.', mark)
+        let is_like_a_group = text.split_once('.').is_some_and(|(_, rest)| rest.len() == 3);
+        let zero = if is_like_a_group { "0" } else { "" };
+        (if text == "-0" { "0".to_owned() } else { format!("{text}{zero}") }).replace('.', mark)
     }
 
     /// A number with three figures or all its whole digits: 1,234 · 123 · 12.3 · 1.23 · 0.0123.

@@ -238,7 +238,7 @@ impl CutForm {
     fn read_outage(&self, mark: DecimalMark, complaints: &mut Complaints) -> Option<Outage> {
         let (field, typed) = if self.length == "other" { ("other", &self.other) } else { ("length", &self.length) };
         let autonomy = if typed.trim().is_empty() {
-            Err("choose how long it lasts".to_owned())
+            Err("choose how long it lasts".to_owned().into())
         } else {
             reading::hours(typed, mark, limits::AUTONOMY_H)
         };

@@ -6,7 +6,7 @@ use super::windows;
 use crate::documents::defaults::usual;
 use crate::documents::limits;
 use crate::documents::names::Named;
-use crate::reading::{self, PowerUnit};
+use crate::reading::{self, PowerUnit, Supplied};
 use crate::sizing::survey::{LifeSupport, Load, MotorPlate, NeedsSine, Site, StartKind};
 use crate::units::{Amps, Fraction, Milliseconds, Seconds};
 use crate::web::forms::{Complaints, text};
@@ -112,7 +112,8 @@ impl Row {
         let share = |number: f64| Fraction::new(number).unwrap_or(Fraction::ONE);
         let unit = PowerUnit::named(&self.unit).unwrap_or_default();
         let power_factor = share(factor.unwrap_or(usual.power_factor));
-        let power = reading::power(&self.power, unit, mark, against.site.supply, power_factor, limits::RUNNING_W);
+        let supplied = Supplied { supply: against.site.supply, power_factor };
+        let power = reading::power(&self.power, unit, mark, supplied, limits::RUNNING_W);
         let power = complaints.take(&field("power"), &label("power"), power);
         let windows = complaints.take(&field("when"), &label("when"), windows::read(&self.when));
         let turn = complaints.take(&field("turn"), &label("takes turns"), text(&self.turn, limits::NAME));
