@@ -32,12 +32,13 @@ create table session (
 
 create index session_of_person on session (person_id);
 
+-- Failed tries to sign in, by e-mail and place they came from, and by place alone.
 create table sign_in_attempt (
-    email_folded text not null,
+    whose text not null,
     at integer not null
 ) strict;
 
-create index attempt_by_email on sign_in_attempt (email_folded, at);
+create index attempt_by_whose on sign_in_attempt (whose, at);
 
 -- One submit, one record: the key of a form, and what its first arrival made.
 create table submission (

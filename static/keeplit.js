@@ -15,6 +15,10 @@
   const trouble = document.getElementById("trouble");
   if (trouble) trouble.focus();
 
+  // On a phone the steps are one line: the one that is open is brought into it.
+  const step = document.querySelector(".steps [aria-current]");
+  if (step) step.closest("ol").scrollLeft = step.offsetLeft - 16;
+
   // − and + beside every count.
   for (const box of document.querySelectorAll("input[data-count]")) {
     const step = (by, words) => {

@@ -27,6 +27,14 @@ struct BackPage {
     faults: Vec<String>,
 }
 
+impl BackPage {
+    /// Whether a customer's phone could not open a link with this address.
+    fn is_for_this_machine_only(&self) -> bool {
+        let host = self.public_address.as_deref().and_then(|address| address.split("://").nth(1));
+        host.is_none_or(|host| ["127.", "localhost", "[::1]", "0.0.0.0"].iter().any(|own| host.starts_with(own)))
+    }
+}
+
 /// A copy of the data file.
 struct Copy {
     name: String,

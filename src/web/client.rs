@@ -1,6 +1,6 @@
 //! From which address a request comes, as far as it can be believed.
 
-use std::net::{IpAddr, Ipv4Addr, SocketAddr};
+use std::net::{IpAddr, Ipv4Addr, Ipv6Addr, SocketAddr};
 
 use axum::extract::{ConnectInfo, FromRequestParts};
 use axum::http::HeaderMap;
@@ -13,6 +13,21 @@ use super::app::App;
 pub struct Client {
     /// Its address: the peer's, or what a proxy of ours says.
     pub address: IpAddr,
+}
+
+impl Client {
+    /// What is counted when a place is counted.
+    pub fn network(self) -> IpAddr {
+        network(self.address)
+    }
+}
+
+/// A household has one IPv4 address, but a whole /64 of IPv6.
+pub fn network(address: IpAddr) -> IpAddr {
+    match address.to_canonical() {
+        IpAddr::V6(v6) => Ipv6Addr::from_bits(v6.to_bits() >> 64 << 64).into(),
+        v4 => v4,
+    }
 }
 
 impl FromRequestParts<App> for Client {
@@ -41,11 +56,14 @@ fn believed(peer: IpAddr, headers: &HeaderMap, proxies: &[IpAddr]) -> IpAddr {
 mod tests {
     use super::*;
 
+    fn address(text: &str) -> IpAddr {
+        text.parse().unwrap()
+    }
+
     #[test]
     fn only_a_proxy_of_ours_is_believed() {
-        let at = |text: &str| text.parse::<IpAddr>().unwrap();
         let headers = |line: &str| HeaderMap::from_iter([("x-forwarded-for".parse().unwrap(), line.parse().unwrap())]);
-        let proxy = at("10.0.0.1");
+        let proxy = address("10.0.0.1");
         for (peer, line, believed_address) in [
             ("192.0.2.9", "198.51.100.7", "192.0.2.9"),
             ("10.0.0.1", "198.51.100.7", "198.51.100.7"),
@@ -53,7 +71,14 @@ mod tests {
             ("10.0.0.1", "198.51.100.7, 10.0.0.1", "198.51.100.7"),
             ("10.0.0.1", "nonsense", "10.0.0.1"),
         ] {
-            assert_eq!(believed(at(peer), &headers(line), &[proxy]), at(believed_address), "{peer} {line}");
+            assert_eq!(believed(address(peer), &headers(line), &[proxy]), address(believed_address), "{peer} {line}");
         }
+    }
+
+    #[test]
+    fn a_household_does_not_get_more_by_changing_its_address() {
+        assert_eq!(network(address("2001:db8:1:2:3:4:5:6")), network(address("2001:db8:1:2:ffff::1")));
+        assert_ne!(network(address("2001:db8:1:2::1")), network(address("2001:db8:1:3::1")));
+        assert_eq!(network(address("::ffff:192.0.2.1")), address("192.0.2.1"));
     }
 }

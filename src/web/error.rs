@@ -160,7 +160,9 @@ pub async fn show(State(app): State<App>, request: Request, next: Next) -> Respo
     for stale in [axum::http::header::CONTENT_LENGTH, axum::http::header::CONTENT_TYPE] {
         parts.headers.remove(stale);
     }
-    (parts.status, parts.headers, Html(text)).into_response()
+    // An id that is no number is an address that is not here.
+    let status = if parts.status == StatusCode::BAD_REQUEST { StatusCode::NOT_FOUND } else { parts.status };
+    (status, parts.headers, Html(text)).into_response()
 }
 
 fn failure_of(response: &Response) -> Option<Failure> {

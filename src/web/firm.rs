@@ -9,8 +9,9 @@ use serde::Deserialize;
 
 use super::app::App;
 use super::assumptions::{self, Row};
+use super::conflict::Conflict;
 use super::error::Error;
-use super::forms::{Complaints, Form, on_to, page, page_again, revision, submit, text};
+use super::forms::{Complaints, Form, on_to, page, page_again, page_of_conflict, revision, submit, text};
 use super::frame::Frame;
 use super::session::Installer;
 use crate::accounts::{Firm, Profile};
@@ -19,6 +20,7 @@ use crate::documents::{Draft, limits};
 use crate::money::Currency;
 use crate::reading;
 use crate::sizing::survey::{Chemistry, Code};
+use crate::store;
 use crate::units::{AcVolts, Celsius, Hertz, Metres};
 use crate::wording::{DecimalMark, Labelled, Numbers};
 
@@ -58,6 +60,8 @@ struct FirmPage {
     form: FirmForm,
     rows: Vec<Row>,
     complaints: Complaints,
+    conflict: Conflict,
+    reload: String,
 }
 
 impl FirmPage {
@@ -79,8 +83,19 @@ pub async fn save(State(app): State<App>, installer: Installer, Form(form): Form
         return page_again(&firm_page(&app, &installer, form, complaints)?);
     };
     let once = submit(&app, &form.key)?;
-    app.store.save_firm(installer.firm.id, once, revision(&form.revision), profile).await?;
-    Ok(on_to(&app.paths().book()))
+    match app.store.save_firm(installer.firm.id, once, revision(&form.revision), profile).await {
+        Err(store::Error::Stale) => show_both(&app, &installer, form).await,
+        saved => saved.map(|()| on_to(&app.paths().book())).map_err(Error::from),
+    }
+}
+
+/// The page as typed, with what is stored by now beside it.
+async fn show_both(app: &App, installer: &Installer, form: FirmForm) -> Result<Response, Error> {
+    let firm = app.store.firm(installer.firm.id).await?;
+    let conflict = Conflict::between(&form.fields(), &FirmForm::of(&firm).fields());
+    let form = FirmForm { revision: firm.revision.to_string(), ..form };
+    let page = firm_page(app, installer, form, Complaints::default())?;
+    page_of_conflict(&FirmPage { conflict, ..page })
 }
 
 fn firm_page(app: &App, installer: &Installer, form: FirmForm, complaints: Complaints) -> Result<FirmPage, Error> {
@@ -88,7 +103,8 @@ fn firm_page(app: &App, installer: &Installer, form: FirmForm, complaints: Compl
     frame.is_error = !complaints.is_empty();
     let defaults = installer.firm.profile.first_draft().assumptions(&[]);
     let rows = assumptions::rows(&defaults, &form.assumptions, frame.numbers);
-    Ok(FirmPage { frame, form, rows, complaints })
+    let reload = frame.paths.firm();
+    Ok(FirmPage { frame, form, rows, complaints, conflict: Conflict::default(), reload })
 }
 
 impl FirmForm {
@@ -122,6 +138,37 @@ impl FirmForm {
             address: profile.address,
             licence: profile.licence,
         }
+    }
+
+    /// Every field with its label, for a comparison; the factors as one.
+    fn fields(&self) -> Vec<(&'static str, String)> {
+        let factors = self.assumptions.iter().filter(|(_, typed)| !typed.trim().is_empty());
+        let factors: Vec<String> = factors.map(|(key, typed)| format!("{key} {}", typed.trim())).collect();
+        [
+            ("Name", &self.name),
+            ("Phone", &self.phone),
+            ("E-mail", &self.email),
+            ("Address", &self.address),
+            ("Licence number", &self.licence),
+            ("Currency", &self.currency),
+            ("Decimal mark", &self.mark),
+            ("Tax", &self.tax),
+            ("A price holds", &self.holds),
+            ("Time zone", &self.zone),
+            ("Supply", &self.supply),
+            ("Frequency", &self.frequency),
+            ("Coldest at the battery", &self.coldest),
+            ("Hottest at the battery", &self.hottest),
+            ("Hottest at the inverter", &self.ambient),
+            ("Bank to inverter", &self.bank_run),
+            ("Inverter to board", &self.board_run),
+            ("Mains to inverter", &self.mains_run),
+            ("Wiring code", &self.code),
+            ("Battery", &self.chemistry),
+            ("Factors of ours", &factors.join(", ")),
+        ]
+        .map(|(label, typed)| (label, typed.clone()))
+        .to_vec()
     }
 
     /// What the firm has set; `None` with complaints.
@@ -198,9 +245,11 @@ impl FirmForm {
         let mut length = |field: &str, label: &str, typed: &str| {
             complaints.take(field, label, reading::metres(typed, mark, limits::LENGTH_M)).map(Metres)
         };
-        draft.runs.bank_to_inverter = length("bank_run", "Bank to inverter", &self.bank_run)?;
-        draft.runs.inverter_to_board = length("board_run", "Inverter to board", &self.board_run)?;
-        draft.runs.mains_to_inverter = length("mains_run", "Mains to inverter", &self.mains_run)?;
+        let bank_run = length("bank_run", "Bank to inverter", &self.bank_run);
+        let board_run = length("board_run", "Inverter to board", &self.board_run);
+        let mains_run = length("mains_run", "Mains to inverter", &self.mains_run);
+        (draft.runs.bank_to_inverter, draft.runs.inverter_to_board) = (bank_run?, board_run?);
+        draft.runs.mains_to_inverter = mains_run?;
         let ratio = (supply? / draft.site.supply.0, AcVolts(supply?));
         draft.site.supply_lowest = draft.site.supply_lowest * ratio.0;
         draft.site.supply_highest = draft.site.supply_highest * ratio.0;

@@ -3,8 +3,8 @@
 use askama::Template;
 use axum::body::Bytes;
 use axum::extract::{FromRequest, Request};
-use axum::http::StatusCode;
-use axum::http::header::CONTENT_TYPE;
+use axum::http::header::{CACHE_CONTROL, CONTENT_TYPE};
+use axum::http::{HeaderValue, StatusCode};
 use axum::response::{Html, IntoResponse, Redirect, Response};
 use serde::de::DeserializeOwned;
 
@@ -118,6 +118,12 @@ impl Complaints {
 /// A page.
 pub fn page(template: &impl Template) -> Result<Response, Error> {
     Ok(Html(template.render()?).into_response())
+}
+
+/// Keeps an answer out of every store: it is about passwords.
+pub async fn unkept(mut response: Response) -> Response {
+    response.headers_mut().insert(CACHE_CONTROL, HeaderValue::from_static("private, no-store"));
+    response
 }
 
 /// A page that shows a form again, as typed, with what is wrong.

@@ -36,7 +36,7 @@ mod survey;
 
 use axum::Router;
 use axum::extract::DefaultBodyLimit;
-use axum::middleware::{from_fn, from_fn_with_state};
+use axum::middleware::{from_fn, from_fn_with_state, map_response};
 use axum::routing::{get, post};
 use tower_http::catch_panic::CatchPanicLayer;
 use tower_http::compression::CompressionLayer;
@@ -53,8 +53,10 @@ const FORM_BYTES: usize = 256 * 1024;
 /// Every route with its layers.
 pub fn router(app: App) -> Router {
     let routes = public().merge(share::routes()).merge(signed_in(&app));
-    let base = app.config.base().to_owned();
-    let routes = if base.is_empty() { routes } else { Router::new().nest(&base, routes) };
+    let routes = match app.config.base() {
+        "" => routes,
+        base => Router::new().nest(base, routes).merge(book_below(base, &app)),
+    };
     routes
         .fallback(error::not_here)
         .layer(DefaultBodyLimit::max(FORM_BYTES))
@@ -67,6 +69,12 @@ pub fn router(app: App) -> Router {
         .with_state(app)
 }
 
+/// The book at the base path with its slash, which nesting leaves out.
+fn book_below(base: &str, app: &App) -> Router<App> {
+    let book = get(book::show).layer(from_fn_with_state(app.clone(), session::require));
+    Router::new().route(&format!("{base}/"), book)
+}
+
 /// What anybody may ask for.
 fn public() -> Router<App> {
     Router::new()
@@ -74,8 +82,15 @@ fn public() -> Router<App> {
         .route("/readyz", get(health::is_ready))
         .route("/robots.txt", get(assets::robots))
         .route("/static/{name}", get(assets::asset))
+        .merge(entrance())
+}
+
+/// Where passwords are typed.
+fn entrance() -> Router<App> {
+    Router::new()
         .route("/begin", get(first_day::show).post(first_day::begin))
         .route("/in", get(sign_in::show).post(sign_in::sign_in))
+        .layer(map_response(forms::unkept))
 }
 
 /// What only a signed-in person may ask for.

@@ -1,7 +1,7 @@
 //! Who is signed in: a random token in a cookie, its hash in the store.
 
 use axum::body::{Body, to_bytes};
-use axum::extract::{FromRequestParts, Request, State};
+use axum::extract::{FromRequestParts, OriginalUri, Request, State};
 use axum::http::header::{COOKIE, ORIGIN, SET_COOKIE};
 use axum::http::request::Parts;
 use axum::http::{HeaderMap, HeaderValue, Method};
@@ -12,6 +12,7 @@ use sha2::{Digest, Sha256};
 
 use super::app::App;
 use super::error::Error;
+use super::forms::unkept;
 use super::{FORM_BYTES, sign_in};
 use crate::accounts::{Firm, Person, PersonId};
 
@@ -43,16 +44,18 @@ pub async fn require(State(app): State<App>, mut request: Request, next: Next) -
         request.extensions_mut().insert(installer);
         return Ok(next.run(request).await);
     }
-    let wanted = format!("{}{}", app.config.base(), path_of(&request));
+    let wanted = path_of(&request).to_owned();
     if request.method() == Method::GET || request.method() == Method::HEAD {
         return Ok(Redirect::to(&app.paths().sign_in_and_go_to(&wanted)).into_response());
     }
     let body = to_bytes(request.into_body(), FORM_BYTES).await.map_err(|_| Error::Unusable("the form is too large"))?;
-    sign_in::ask_again(&app, &wanted, &String::from_utf8_lossy(&body))
+    Ok(unkept(sign_in::ask_again(&app, &wanted, &String::from_utf8_lossy(&body))?).await)
 }
 
+/// The address as the browser asked for it, the base path included.
 fn path_of(request: &Request) -> &str {
-    request.uri().path_and_query().map_or("/", |address| address.as_str())
+    let asked = request.extensions().get::<OriginalUri>().map_or(request.uri(), |original| &original.0);
+    asked.path_and_query().map_or("/", |address| address.as_str())
 }
 
 async fn find(app: &App, headers: &HeaderMap) -> Result<Option<Installer>, Error> {

@@ -10,6 +10,7 @@ use serde::Deserialize;
 use tower::ServiceExt;
 
 use super::app::App;
+use super::client::Client;
 use super::error::Error;
 use super::forms::{Complaints, Form, on_to, page, page_again};
 use super::frame::Frame;
@@ -17,8 +18,10 @@ use super::{router, session};
 use crate::accounts::{Person, PersonId};
 use crate::passwords;
 
-/// Failed tries on one address that are let through, and the seconds they are remembered.
+/// Failed tries from one place that are let through: on one account, and on all of them.
 const TRIES: i64 = 10;
+const TRIES_IN_ALL: i64 = 60;
+/// The seconds they are remembered.
 const REMEMBERED: i64 = 15 * 60;
 
 /// What a person types to sign in, and what they were about to do.
@@ -60,27 +63,36 @@ pub fn ask_again(app: &App, next: &str, body: &str) -> Result<Response, Error> {
 /// Signs in; a form that was sent too late is then sent again.
 pub async fn sign_in(
     State(app): State<App>,
+    client: Client,
     headers: HeaderMap,
     Form(form): Form<SignInForm>,
 ) -> Result<Response, Error> {
-    match known(&app, &form).await? {
+    match known(&app, client, &form).await? {
         Some(person) if form.again.is_empty() => {
             let next = if app.paths().is_own(&form.next) { form.next } else { app.paths().book() };
             session::start(&app, person, Redirect::to(&next).into_response()).await
         }
         Some(person) => send_again(&app, person, &headers, form).await,
-        None => refused(&app, form).await,
+        None => refused(&app, client, form).await,
     }
 }
 
 /// The person whose e-mail and password these are. Too many failed tries are stopped first.
-async fn known(app: &App, form: &SignInForm) -> Result<Option<PersonId>, Error> {
-    let now = app.clock.now();
-    if app.store.attempts_since(&form.email, now - REMEMBERED).await? >= TRIES {
-        return Err(Error::TooMany);
+async fn known(app: &App, client: Client, form: &SignInForm) -> Result<Option<PersonId>, Error> {
+    let since = app.clock.now() - REMEMBERED;
+    for (whose, tries) in counted(client, form) {
+        if app.store.attempts_since(&whose, since).await? >= tries {
+            return Err(Error::TooMany);
+        }
     }
     let person = app.store.person_by_email(&form.email).await?;
     fits(app, form.password.clone(), person).await
+}
+
+/// What failed tries are counted by, and how many of each are let through.
+fn counted(client: Client, form: &SignInForm) -> [(String, i64); 2] {
+    let place = client.network();
+    [(format!("{} from {place}", form.email.trim()), TRIES), (format!("from {place}"), TRIES_IN_ALL)]
 }
 
 /// Hashing is costly: one at a time, on a thread of its own; the surplus is turned away.
@@ -97,9 +109,11 @@ async fn fits(app: &App, password: String, person: Option<Person>) -> Result<Opt
     checked.await.map_err(|error| Error::Internal(error.into()))
 }
 
-async fn refused(app: &App, form: SignInForm) -> Result<Response, Error> {
+async fn refused(app: &App, client: Client, form: SignInForm) -> Result<Response, Error> {
     let now = app.clock.now();
-    app.store.note_attempt(&form.email, now, now - REMEMBERED).await?;
+    for (whose, _) in counted(client, &form) {
+        app.store.note_attempt(&whose, now, now - REMEMBERED).await?;
+    }
     let mut frame = Frame::bare(app, "Sign in");
     frame.is_error = true;
     let mut complaints = Complaints::default();

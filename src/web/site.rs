@@ -89,16 +89,18 @@ pub async fn save(
     draft.site = site;
     let once = submit(&app, &form.key)?;
     match app.store.save_site(firm, once, job.id, revision(&form.revision), contact, &draft).await {
-        Err(store::Error::Stale) => {
-            let stored = SiteForm::of(&job, mark);
-            let conflict = Conflict::between(&form.fields(), &stored.fields());
-            let form = SiteForm { revision: job.revision.to_string(), ..form };
-            let mut page = site_page(&app, &installer, job.id, form)?;
-            page.conflict = conflict;
-            page_of_conflict(&page)
-        }
+        Err(store::Error::Stale) => show_both(&app, &installer, job.id, form).await,
         saved => saved.map(|()| on_to(&app.paths().list(job.id))).map_err(Error::from),
     }
+}
+
+/// The page as typed, with what is stored by now beside it.
+async fn show_both(app: &App, installer: &Installer, id: JobId, form: SiteForm) -> Result<Response, Error> {
+    let job = app.store.job(installer.firm.id, id).await?;
+    let stored = SiteForm::of(&job, installer.firm.profile.decimal_mark);
+    let conflict = Conflict::between(&form.fields(), &stored.fields());
+    let page = site_page(app, installer, id, SiteForm { revision: stored.revision, ..form })?;
+    page_of_conflict(&SitePage { conflict, ..page })
 }
 
 fn site_page(app: &App, installer: &Installer, id: JobId, form: SiteForm) -> Result<SitePage, Error> {
