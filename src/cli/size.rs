@@ -1,6 +1,6 @@
 //! `keeplit size`: a survey file to a design.
 
-use std::io::{Read, Write};
+use std::io::{ErrorKind, Read, Write};
 use std::path::{Path, PathBuf};
 use std::process::ExitCode;
 
@@ -9,8 +9,16 @@ use anyhow::Context;
 use crate::documents::{Fault, design, limits, survey};
 use crate::sizing;
 
+const EXAMPLES: &str = "\
+Examples:
+  keeplit size survey.json > design.json
+  keeplit size - < survey.json
+
+A wrong file gets one line for each fault on standard error, and exit code 2.";
+
 /// What `size` is told.
 #[derive(Debug, clap::Args)]
+#[command(before_help = EXAMPLES)]
 pub struct Arguments {
     /// The survey, in the form keeplit-survey-1; - reads it from standard input
     survey: PathBuf,
@@ -22,9 +30,7 @@ pub fn run(arguments: &Arguments) -> anyhow::Result<ExitCode> {
     match answer {
         Ok((draft, survey)) => {
             let design = sizing::size(&survey, draft.assumptions(&[]));
-            let mut out = std::io::stdout().lock();
-            serde_json::to_writer_pretty(&mut out, &design::write(&design, &draft))?;
-            writeln!(out)?;
+            say(&serde_json::to_string_pretty(&design::write(&design, &draft))?)?;
             Ok(ExitCode::SUCCESS)
         }
         Err(faults) => {
@@ -33,6 +39,14 @@ pub fn run(arguments: &Arguments) -> anyhow::Result<ExitCode> {
             }
             Ok(ExitCode::from(2))
         }
+    }
+}
+
+/// Writes a text to standard output in one go; a reader that has seen enough may close it.
+fn say(text: &str) -> anyhow::Result<()> {
+    match std::io::stdout().lock().write_all(format!("{text}\n").as_bytes()) {
+        Err(error) if error.kind() != ErrorKind::BrokenPipe => Err(error).context("cannot write the design"),
+        _ => Ok(()),
     }
 }
 

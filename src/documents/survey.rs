@@ -1,7 +1,7 @@
 //! Reading `keeplit-survey-1`: the one form of a survey, on the command line, in a file and in a job.
 
-use serde_json::json;
 use serde_json::value::RawValue;
+use serde_json::{Value, json};
 
 use super::defaults::{self, usual};
 use super::draft::Draft;
@@ -46,21 +46,19 @@ pub fn read_draft(text: &str) -> Result<Draft, Vec<Fault>> {
 }
 
 fn gather(text: &str) -> (Draft, Vec<Fault>) {
+    let document = match parsed(text) {
+        Ok(document) => document,
+        Err(fault) => return (Draft::default(), vec![fault]),
+    };
     let mut gathered = Gathered::default();
-    let mut draft = Draft::default();
-    match parsed(text) {
-        Err(fault) => gathered.faults.push(fault),
-        Ok(document) => {
-            if let Some(object) = Object::open("", document, &mut gathered) {
-                draft = whole(object);
-            }
-        }
-    }
-    draft.defaults_taken = gathered.defaults;
-    (draft, gathered.faults)
+    let mut draft = Object::open("", document, &mut gathered).map(whole).unwrap_or_default();
+    draft.defaults_taken = std::mem::take(&mut gathered.defaults);
+    (draft, gathered.into_faults())
 }
 
 fn parsed(text: &str) -> Result<&RawValue, Fault> {
+    // Some editors put a byte order mark before the text.
+    let text = text.trim_start_matches('\u{feff}');
     if text.len() > limit::FILE_BYTES {
         return Err(Fault::new("", format!("give at most {} bytes", limit::grouped(limit::FILE_BYTES as f64))));
     }
@@ -108,7 +106,7 @@ fn whole(mut object: Object) -> Draft {
 /// Reads an inner object, or its defaults where it is left out or is no object.
 fn inner<T>(object: &mut Object, key: &'static str, read: impl FnOnce(&mut Object) -> T) -> T {
     let path = object.path(key);
-    let value = object.raw(key);
+    let value = object.given(key);
     let gathered = object.gathered();
     let opened = value.and_then(|value| Object::open(&path, value, gathered));
     let mut inner = match opened {
@@ -124,7 +122,7 @@ fn site(o: &mut Object) -> Site {
     let usual = defaults::site();
     let supply = o.number_or("supply_v", limit::SUPPLY_V, usual.supply.0);
     let site = Site {
-        name: o.text("name", limit::NAME).unwrap_or_default(),
+        name: text_or(o, "name", json!("")).unwrap_or_default(),
         supply: AcVolts(supply),
         frequency: Hertz(o.number_or("frequency_hz", limit::FREQUENCY_HZ, usual.frequency.0)),
         supply_lowest: seen(o, "supply_lowest_v", supply * defaults::LOWEST_OVER_NOMINAL),
@@ -143,6 +141,14 @@ fn site(o: &mut Object) -> Site {
         o.fault("battery_hottest_c", "give no less than battery_coldest_c");
     }
     site
+}
+
+/// A text that may be left out; that it was is noted.
+fn text_or(o: &mut Object, key: &'static str, usual: Value) -> Option<String> {
+    if o.given(key).is_none() {
+        return o.default(key, usual, None);
+    }
+    o.text(key, limit::NAME)
 }
 
 fn seen(o: &mut Object, key: &'static str, usual: f64) -> AcVolts {
@@ -164,7 +170,7 @@ fn outage(o: &mut Object) -> Option<Outage> {
 }
 
 fn starts_at(o: &mut Object) -> StartsAt {
-    match o.text("starts_at", limit::NAME).as_deref() {
+    match text_or(o, "starts_at", json!("worst")).as_deref() {
         None | Some("worst") => StartsAt::Worst,
         Some(text) => match clock(text).filter(|time| *time < TimeOfDay::END_OF_DAY) {
             Some(time) => StartsAt::At(time),
@@ -222,7 +228,7 @@ fn load(o: &mut Object) -> Option<Load> {
         motor_plate: motor_plate(o),
         duty: share(o.number_or("duty", limit::DUTY, 1.0)),
         windows: windows(o),
-        turn: o.text("turn", limit::NAME).filter(|turn| !turn.is_empty()),
+        turn: text_or(o, "turn", Value::Null).filter(|turn| !turn.is_empty()),
         needs_sine: o.choice_or("needs_sine", usual.needs_sine),
         max_break: Milliseconds(o.number_or("max_break_ms", limit::MAX_BREAK_MS, usual.max_break_ms)),
         life_support: o.choice_or("life_support", defaults::LIFE_SUPPORT),
@@ -274,16 +280,12 @@ fn code_letter(o: &mut Object) -> Option<char> {
 fn windows(o: &mut Object) -> Vec<Window> {
     let entries = o.list("windows", limit::WINDOWS);
     if entries.is_empty() {
-        if o.raw("windows").is_none() {
-            let path = o.path("windows");
-            o.gathered().defaults.push((path, json!([["00:00", "24:00"]])));
-        }
-        return vec![Window::ALL_DAY];
+        return o.default("windows", json!([["00:00", "24:00"]]), vec![Window::ALL_DAY]);
     }
     let read = |(at, value): (usize, &RawValue)| {
         let window = window(value);
         if window.is_none() {
-            o.fault(&format!("windows[{at}]"), "give two different times, as [\"18:00\", \"23:00\"]");
+            o.fault_at("windows", at, value, "give two different times, as [\"18:00\", \"23:00\"]");
         }
         window
     };
@@ -312,7 +314,10 @@ fn choice(o: &mut Object) -> Choice {
 
 /// `None` leaves the volts to the engine.
 fn bus(o: &mut Object) -> Option<BusVolts> {
-    let value = o.raw("bus_v")?;
+    let Some(value) = o.given("bus_v") else { return o.default("bus_v", Value::Null, None) };
+    if value.get() == "null" {
+        return None;
+    }
     let number = value.get().parse::<f64>().map(DcVolts);
     let bus = number.ok().and_then(|volts| BusVolts::ALL.into_iter().find(|bus| bus.volts() == volts));
     if bus.is_none() {
@@ -334,21 +339,27 @@ fn runs(o: &mut Object) -> Runs {
 }
 
 fn ratings(object: &mut Object) -> Vec<BatteryRating> {
+    if object.given("battery_ratings").is_none() {
+        return object.default("battery_ratings", json!([]), Vec::new());
+    }
     let entries = object.list("battery_ratings", limit::RATINGS);
-    let read = |(at, value): (usize, &RawValue)| {
-        let mut o = Object::open(&format!("battery_ratings[{at}]"), value, object.gathered())?;
-        let hours = required(&mut o, "hours", limit::RATING_HOURS);
-        let capacity = required(&mut o, "ah", limit::RATING_AH);
-        o.finish();
-        Some(BatteryRating { hours: Hours(hours?), capacity: AmpHours(capacity?) })
-    };
-    let ratings: Vec<_> = entries.into_iter().enumerate().filter_map(read).collect();
-    for (at, rating) in ratings.iter().enumerate() {
-        if ratings[..at].iter().any(|earlier| earlier.hours == rating.hours) {
-            object.fault(&format!("battery_ratings[{at}].hours"), "this rate is given twice: give it once");
+    let mut ratings: Vec<BatteryRating> = Vec::new();
+    for (at, value) in entries.into_iter().enumerate() {
+        let Some(rating) = rating(&format!("battery_ratings[{at}]"), value, object.gathered()) else { continue };
+        if ratings.iter().any(|earlier| earlier.hours == rating.hours) {
+            object.fault_at("battery_ratings", at, value, "this rate is given twice: give it once");
         }
+        ratings.push(rating);
     }
     ratings
+}
+
+fn rating(path: &str, value: &RawValue, gathered: &mut Gathered) -> Option<BatteryRating> {
+    let mut o = Object::open(path, value, gathered)?;
+    let hours = required(&mut o, "hours", limit::RATING_HOURS);
+    let capacity = required(&mut o, "ah", limit::RATING_AH);
+    o.finish();
+    Some(BatteryRating { hours: Hours(hours?), capacity: AmpHours(capacity?) })
 }
 
 fn required(o: &mut Object, key: &'static str, limit: limit::Limit) -> Option<f64> {
@@ -381,7 +392,7 @@ fn reuse(value: &RawValue, gathered: &mut Gathered) -> Option<ReusedInverter> {
 }
 
 fn overrides(object: &mut Object, chemistry: Chemistry) -> Vec<(String, f64)> {
-    let Some(value) = object.raw("assumptions") else { return Vec::new() };
+    let Some(value) = object.given("assumptions") else { return Vec::new() };
     let Some(mut o) = Object::open("assumptions", value, object.gathered()) else { return Vec::new() };
     let mut assumptions = Assumptions::defaults(chemistry);
     let mut overrides: Vec<(String, f64)> = Vec::new();

@@ -121,7 +121,18 @@ fn the_shortest_survey_is_answered_and_names_what_it_took() {
         r#"{"format":"keeplit-survey-1","outage":{"autonomy_h":2},"loads":[{"name":"Lamp","running_w":10}]}"#;
     let design = answer(shortest);
     let taken = design["defaults_taken"].as_object().expect("an object");
-    for path in ["site.supply_v", "loads[0].power_factor", "choice.chemistry", "runs.bank_to_inverter_m"] {
+    for path in [
+        "site.name",
+        "site.supply_v",
+        "outage.starts_at",
+        "loads[0].power_factor",
+        "loads[0].turn",
+        "loads[0].windows",
+        "choice.chemistry",
+        "choice.bus_v",
+        "runs.bank_to_inverter_m",
+        "battery_ratings",
+    ] {
         assert!(taken.contains_key(path), "{path} is not named among {taken:?}");
     }
     assert!(!taken.contains_key("outage.autonomy_h"));
@@ -134,6 +145,29 @@ fn an_override_is_in_force_and_shown_beside_its_default() {
     let entry = entries.iter().find(|entry| entry["key"] == "depth_of_discharge_max").expect("it is listed");
     assert_eq!((entry["value"].as_f64(), entry["default"].as_f64()), (Some(0.42), Some(0.6)));
     assert_eq!(design["bank"]["depth_of_discharge_max"], 0.42);
+}
+
+#[test]
+fn a_survey_that_says_everything_takes_no_default() {
+    let taken = answer(EXAMPLE)["defaults_taken"].clone();
+    let optional = |path: &str| EXAMPLE.contains(&format!("\"{}\"", path.rsplit('.').next().unwrap_or(path)));
+    for path in taken.as_object().expect("an object").keys() {
+        assert!(!optional(path), "{path} is given and yet named as a default");
+    }
+}
+
+#[test]
+fn a_byte_order_mark_before_the_file_is_passed_over() {
+    assert_eq!(answer(format!("\u{feff}{EXAMPLE}")), answer(EXAMPLE));
+}
+
+#[test]
+fn a_reader_that_has_seen_enough_is_no_error() {
+    let path = file("closed.json", EXAMPLE);
+    let mut child = keeplit(&["size", path.to_str().expect("UTF-8")]).spawn().expect("the program starts");
+    drop(child.stdout.take());
+    let output = child.wait_with_output().expect("the program ends");
+    assert_eq!((output.status.code(), output.stderr.len()), (Some(0), 0));
 }
 
 #[test]

@@ -201,6 +201,63 @@ fn every_fault_of_a_file_is_told_at_once() {
 }
 
 #[test]
+fn null_is_taken_only_where_the_form_knows_nothing_as_a_value() {
+    for (old, key, path) in [
+        ("\"power_factor\": 0.7", "power_factor", "loads[0].power_factor"),
+        ("\"start\": \"compressor\"", "start", "loads[0].start"),
+        ("\"altitude_m\": 300", "altitude_m", "site.altitude_m"),
+        ("[[\"00:00\", \"24:00\"]]", "", "loads[0].windows"),
+    ] {
+        let null = if key.is_empty() { "null".to_owned() } else { format!("\"{key}\": null") };
+        assert_refused(old, &null, path, "give");
+    }
+    let lines = refusal(r#"{"format":"keeplit-survey-1","site":null,"outage":null,"loads":null}"#);
+    assert_eq!(lines.len(), 3, "{lines:?}");
+    assert!(lines.iter().all(|line| line.contains("not null")), "{lines:?}");
+}
+
+#[test]
+fn a_key_that_would_move_the_cursor_or_never_ends_is_shown_on_one_short_line() {
+    assert_refused(WATTS, "\"running_w\": 150, \"a\\nb\\u001b[2J\": 1", "loads[0].a\\nb\\u{1b}[2J", "unknown key");
+    let lines = refusal(example_with(WATTS, &format!("\"running_w\": 150, \"{}\": 1", "k".repeat(500_000))));
+    assert!(lines.len() == 1 && lines[0].contains("kkk…: unknown key"), "{}", lines.len());
+}
+
+#[test]
+fn half_a_character_is_told_as_such() {
+    assert_refused("Chest freezer", "\\ud800", "loads[0].name", "half a character");
+    assert_refused(WATTS, "\"running_w\": 150, \"\\udc00\": 1", "loads[0]", "half a character");
+}
+
+#[test]
+fn faults_are_told_in_the_order_of_the_file() {
+    let text = r#"{
+      "colour": 1, "format": "keeplit-survey-1",
+      "loads": [ { "name": "Lamp", "watts": 10, "duty": 2, "running_w": -1 }, { "running_w": 0, "name": 5 } ],
+      "outage": { "autonomy_h": 1e309, "battery_ratings": 1, "cuts_per_week": "daily" },
+      "site": { "supply_v": 3 } }"#;
+    let paths: Vec<_> = refusal(text).iter().map(|line| line.split(": ").next().unwrap_or("").to_owned()).collect();
+    let expected = [
+        "colour",
+        "loads[0].watts",
+        "loads[0].duty",
+        "loads[0].running_w",
+        "loads[1].running_w",
+        "loads[1].name",
+        "outage.autonomy_h",
+        "outage.battery_ratings",
+        "outage.cuts_per_week",
+        "site.supply_v",
+    ];
+    assert_eq!(paths, expected);
+}
+
+#[test]
+fn a_battery_rate_given_twice_is_refused_where_it_stands() {
+    assert_refused("\"hours\": 10", "\"hours\": 20", "battery_ratings[1]", "twice");
+}
+
+#[test]
 fn a_file_that_is_not_there_is_an_error_of_another_kind() {
     let missing = file("gone.json", "");
     std::fs::remove_file(&missing).expect("it was there");
