@@ -116,3 +116,13 @@ pub fn folded(text: &str) -> String {
     use unicode_normalization::UnicodeNormalization;
     text.trim().nfkc().flat_map(char::to_lowercase).collect()
 }
+
+/// Something before and behind one @, without spaces; the rest only a letter can tell.
+pub fn is_email(typed: &str) -> bool {
+    let typed = typed.trim();
+    let parts: Vec<_> = typed.split('@').collect();
+    parts.len() == 2
+        && parts.iter().all(|part| !part.is_empty())
+        && !typed.contains(char::is_whitespace)
+        && typed.len() <= 254
+}

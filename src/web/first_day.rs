@@ -10,7 +10,7 @@ use super::error::Error;
 use super::forms::{Complaints, Form, on_to, page, page_again, submit, text};
 use super::frame::Frame;
 use super::session;
-use crate::accounts::{NewPerson, Profile};
+use crate::accounts::{NewPerson, Profile, is_email};
 use crate::passwords;
 
 /// What is typed on the first day.
@@ -88,16 +88,6 @@ fn complaints(app: &App, form: &FirstDayForm) -> Complaints {
         complaints.add("password", "Password", message);
     }
     complaints
-}
-
-/// Something before and behind one @, without spaces; the rest only a letter can tell.
-pub fn is_email(typed: &str) -> bool {
-    let typed = typed.trim();
-    let parts: Vec<_> = typed.split('@').collect();
-    parts.len() == 2
-        && parts.iter().all(|part| !part.is_empty())
-        && !typed.contains(char::is_whitespace)
-        && typed.len() <= 254
 }
 
 async fn new_person(app: &App, form: &FirstDayForm) -> Result<NewPerson, Error> {
