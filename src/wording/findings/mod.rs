@@ -76,7 +76,7 @@ pub fn finding(finding: &Finding) -> Told {
         }
         OutsideRatings { hours, shortest, longest } => bank::outside_ratings(*hours, *shortest, *longest),
         OutsideMethod { what, given, lowest, highest, unit } => {
-            bank::outside_method(*what, *given, *lowest, *highest, *unit)
+            bank::outside_method(what, *given, *lowest, *highest, unit)
         }
         CannotRefill { needs, has, charger_needed } => charger::cannot_refill(*needs, *has, *charger_needed),
         NoMains => charger::no_mains(),
