@@ -121,14 +121,6 @@ pub fn percent(text: &str, mark: DecimalMark, limit: Limit) -> Result<f64, Refus
     in_units(text, mark, hundred, &[("%", 1.0)]).map(|percent| percent / 100.0)
 }
 
-/// Money in smallest coins of so many decimals.
-pub fn money_minor(text: &str, mark: DecimalMark, decimals: u32, most: i64) -> Result<i64, Refusal> {
-    let coins = 10f64.powi(decimals as i32);
-    let limit = Limit { lowest: 0.0, highest: most as f64 / coins, unit: "", whole: false };
-    let amount = in_units(text, mark, limit, &[("", 1.0)])?;
-    Ok((amount * coins).round() as i64)
-}
-
 /// Hours, also as `6h30`, `6:30`, `6 h 30 min`, `390 min`.
 pub fn hours(text: &str, mark: DecimalMark, limit: Limit) -> Result<f64, Refusal> {
     const UNITS: [Unit; 6] =
@@ -274,31 +266,6 @@ fn echo(number: f64, unit: &str, running: f64, supplied: Supplied, numbers: Numb
     }
 }
 
-/// `2x60W`: how many, and the rest; one where no count stands before an x.
-pub fn counted(text: &str) -> (u32, &str) {
-    let text = text.trim();
-    let split =
-        text.split_once(['x', 'X', '×']).and_then(|(count, rest)| Some((count.trim().parse().ok()?, rest.trim())));
-    split.filter(|(count, _)| *count > 0).unwrap_or((1, text))
-}
-
-/// `6 lamps 9W 5h`: count, name, power and hours a day, in this order; the count and the hours may be missing.
-pub fn one_line(text: &str, mark: DecimalMark) -> Option<(u32, String, String, Option<f64>)> {
-    let words: Vec<&str> = text.split_whitespace().collect();
-    let has = |word: &str, units: &[&str]| {
-        number_and_unit(word, mark).is_ok_and(|typed| units.contains(&typed.unit.as_str()))
-    };
-    let power = words.iter().position(|word| has(word, &["w", "kw", "hp", "a", "va"]))?;
-    let (quantity, from) = match words.first().and_then(|word| word.parse::<u32>().ok()) {
-        Some(quantity) if power > 0 => (quantity, 1),
-        _ => (1, 0),
-    };
-    let name = words.get(from..power)?.join(" ");
-    let hours = words[power + 1..].iter().find(|word| has(word, &["h"]));
-    let hours = hours.and_then(|word| number_and_unit(word, mark).ok()).map(|typed| typed.number);
-    (!name.is_empty() && quantity > 0).then(|| (quantity, name, words[power].to_owned(), hours))
-}
-
 #[cfg(test)]
 mod tests {
     use super::*;
@@ -401,25 +368,13 @@ mod tests {
     }
 
     #[test]
-    fn lengths_heat_shares_and_money_are_read() {
+    fn lengths_heat_and_shares_are_read() {
         assert_eq!(metres("150cm", MARK, limits::LENGTH_M), Ok(1.5));
         assert!((metres("5 ft", MARK, limits::LENGTH_M).unwrap() - 1.524).abs() < 1e-12);
         assert_eq!(temperature("−5", MARK, limits::TEMPERATURE_C), Ok(-5.0));
         assert_eq!(temperature("50 °F", MARK, limits::TEMPERATURE_C), Ok(10.0));
         assert_eq!(percent("45 %", MARK, limits::DUTY), Ok(0.45));
-        assert_eq!(money_minor("1 200,50", MARK, 2, 1_000_000), Ok(120_050));
-        assert!(money_minor("-1", MARK, 2, 1_000_000).is_err());
         assert_eq!(whole("2.5", MARK, limits::QUANTITY), Err("give a whole number from 1 to 1,000".to_owned().into()));
         assert_eq!(whole("4294967296", MARK, limits::QUANTITY).ok(), None);
-    }
-
-    #[test]
-    fn a_line_tells_count_name_power_and_hours() {
-        let line = |text| one_line(text, MARK);
-        assert_eq!(line("6 lamps 9W 5h"), Some((6, "lamps".into(), "9W".into(), Some(5.0))));
-        assert_eq!(line("hall lamp 9W"), Some((1, "hall lamp".into(), "9W".into(), None)));
-        assert_eq!(line("lamps"), None);
-        assert_eq!(counted("2 × 60"), (2, "60"));
-        assert_eq!(counted("60"), (1, "60"));
     }
 }

@@ -1,5 +1,7 @@
 //! Forms: read whole, complained about at once, shown again as typed.
 
+use std::borrow::Cow;
+
 use askama::Template;
 use axum::body::Bytes;
 use axum::extract::{FromRequest, Request};
@@ -34,7 +36,20 @@ impl<T: DeserializeOwned, S: Send + Sync> FromRequest<S> for Form<T> {
 pub fn read<T: DeserializeOwned>(body: &[u8]) -> Result<T, Error> {
     let text = std::str::from_utf8(body).map_err(|_| Error::Unusable("the form is not text"))?;
     let config = serde_qs::Config::new().max_depth(3).use_form_encoding(true);
-    config.deserialize_str(text).map_err(|_| Error::Unusable("the form does not fit the page"))
+    config.deserialize_str(&picked(text)).map_err(|_| Error::Unusable("the form does not fit the page"))
+}
+
+/// The form with the reading that was picked in its field: `pick=name=value`, one of two buttons.
+///
+/// Name and value stay encoded as the browser sent them, which encodes both the same way everywhere.
+fn picked(text: &str) -> Cow<'_, str> {
+    let pick = text.split('&').find_map(|pair| pair.strip_prefix("pick=")?.split_once("%3D"));
+    let Some((field, value)) = pick else { return Cow::Borrowed(text) };
+    let pairs = text.split('&').map(|pair| match pair.split_once('=') {
+        Some((name, _)) if name == field => format!("{field}={value}"),
+        _ => pair.to_owned(),
+    });
+    Cow::Owned(pairs.collect::<Vec<_>>().join("&"))
 }
 
 /// The submit of a form that carries a key.
@@ -109,6 +124,17 @@ impl Complaints {
         self.0.iter().any(|complaint| complaint.field.starts_with(beginning))
     }
 
+    /// The same in the words of the box on top; empty if nothing is wrong.
+    pub fn told(&self, field: &str) -> String {
+        let complaint = self.0.iter().find(|complaint| complaint.field == field);
+        complaint.map_or_else(String::new, |complaint| format!("{}: {}", complaint.label, complaint.message))
+    }
+
+    /// What could have been meant by a field; empty unless it can be read two ways.
+    pub fn readings(&self, field: &str) -> &[String] {
+        self.0.iter().find(|complaint| complaint.field == field).map_or(&[], |complaint| &complaint.readings)
+    }
+
     /// What is wrong with a field; empty if nothing is.
     pub fn of(&self, field: &str) -> &str {
         self.0.iter().find(|complaint| complaint.field == field).map_or("", |complaint| complaint.message.as_str())
@@ -150,5 +176,20 @@ pub fn text(typed: &str, most: usize) -> Result<String, String> {
         Err("leave out control characters".to_owned())
     } else {
         Ok(text.to_owned())
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn a_reading_that_was_picked_stands_in_its_field() {
+        let sent = "key=k&loads%5B3%5D%5Bpower%5D=1.500&name=a+b&pick=loads%5B3%5D%5Bpower%5D%3D1500+W";
+        let expected = "key=k&loads%5B3%5D%5Bpower%5D=1500+W&name=a+b&pick=loads%5B3%5D%5Bpower%5D%3D1500+W";
+        assert_eq!(picked(sent), expected);
+        for plain in ["", "key=k&name=pick", "pick=", "pick=a%3Db"] {
+            assert_eq!(picked(plain), plain);
+        }
     }
 }

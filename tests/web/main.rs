@@ -2,11 +2,15 @@
 
 mod access;
 mod base_path;
+mod cut;
 mod first_day;
 mod foreign_forms;
 mod helpers;
 mod job_book;
+mod list;
 mod my_firm;
+mod page_form;
+mod runs;
 mod sign_in;
 mod site;
 mod wire;

@@ -2,6 +2,4 @@
 
 pub mod cut;
 pub mod list;
-mod row;
 pub mod runs;
-mod windows;
