@@ -19,6 +19,11 @@
   const step = document.querySelector(".steps [aria-current]");
   if (step) step.closest("ol").scrollLeft = step.offsetLeft - 16;
 
+  // What is typed beside a choice picks it.
+  for (const box of document.querySelectorAll("input[data-picks]")) {
+    box.addEventListener("input", () => { document.getElementById(box.dataset.picks).checked = true; });
+  }
+
   // − and + beside every count.
   for (const box of document.querySelectorAll("input[data-count]")) {
     const step = (by, words) => {

@@ -124,6 +124,11 @@ impl Complaints {
         self.0.iter().any(|complaint| complaint.field.starts_with(beginning))
     }
 
+    /// Whether some field can be read two ways.
+    pub fn has_readings(&self) -> bool {
+        self.0.iter().any(|complaint| !complaint.readings.is_empty())
+    }
+
     /// The same in the words of the box on top; empty if nothing is wrong.
     pub fn told(&self, field: &str) -> String {
         let complaint = self.0.iter().find(|complaint| complaint.field == field);

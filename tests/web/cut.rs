@@ -34,7 +34,6 @@ async fn everything_typed_is_stored_and_shown_again() {
     let cut = format!("{}/cut", ana.start_job().await);
     let typed = [
         ("length", "12"),
-        ("starts", "at"),
         ("starts_time", "19:30"),
         ("cuts", "3.5"),
         ("mains", "20"),
@@ -45,7 +44,6 @@ async fn everything_typed_is_stored_and_shown_again() {
         ("ratings[0][ah]", "150"),
         ("ratings[1][hours]", "10"),
         ("ratings[1][ah]", "135"),
-        ("reuse", "yes"),
         ("reuse_va", "1800"),
         ("reuse_w", "1440"),
         ("reuse_wave", "square"),
@@ -67,12 +65,10 @@ async fn faults_are_told_at_once_and_nothing_typed_is_lost() {
     let typed = [
         ("length", "other"),
         ("other", "6-8 h"),
-        ("starts", "at"),
         ("starts_time", "evening"),
         ("cuts", "400"),
         ("ratings[0][hours]", "20"),
         ("ratings[0][ah]", ""),
-        ("reuse", "yes"),
         ("reuse_va", "5"),
         ("reuse_low", "200"),
     ];
@@ -93,6 +89,20 @@ async fn faults_are_told_at_once_and_nothing_typed_is_lost() {
     ] {
         assert!(page.contains(told), "{told}: {page}");
     }
+}
+
+#[tokio::test]
+async fn a_length_that_is_typed_counts_without_being_picked_and_an_emptied_unit_is_gone() {
+    let service = Service::start().await;
+    let ana = service.ana().await;
+    let cut = format!("{}/cut", ana.start_job().await);
+    PageForm::of(&ana, &cut).await.with(&[("other", "5h"), ("reuse_va", "900")]).send(&ana, &cut).await;
+    let form = PageForm::of(&ana, &cut).await;
+    assert_eq!((form.value("length"), form.value("other"), form.value("reuse_va")), ("other", "5", "900"));
+    let answer = form.clone().with(&[("reuse_va", ""), ("reuse_w", "700")]).send(&ana, &cut).await;
+    assert!(answer.text().await.unwrap().contains("Its VA: give 50 to 50,000 VA"));
+    form.with(&[("reuse_va", "")]).send(&ana, &cut).await;
+    assert_eq!(PageForm::of(&ana, &cut).await.value("reuse_va"), "");
 }
 
 #[tokio::test]

@@ -40,7 +40,7 @@ async fn twelve_loads_are_counted_with_one_submit() {
     let form = PageForm::on(&page);
     assert_eq!((form.value("loads[0][name]"), form.value("loads[11][quantity]")), ("Camera recorder with disk", "1"));
     assert!(page.contains("0.5\u{a0}hp at the shaft is 373\u{a0}W; it draws about 622\u{a0}W"), "{page}");
-    assert!(page.contains("electronic supply · 18:00-23:00"), "{page}");
+    assert!(page.contains("18:00-23:00 · electronic supply"), "{page}");
     assert!(page.contains("Running ") && page.contains("at start "));
 }
 

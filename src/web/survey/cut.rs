@@ -35,7 +35,6 @@ pub struct CutForm {
     revision: String,
     length: String,
     other: String,
-    starts: String,
     starts_time: String,
     cuts: String,
     mains: String,
@@ -43,7 +42,6 @@ pub struct CutForm {
     bus: String,
     square: String,
     ratings: BTreeMap<u32, Rating>,
-    reuse: String,
     reuse_va: String,
     reuse_w: String,
     reuse_surge: String,
@@ -159,7 +157,6 @@ impl CutForm {
         };
         let mut form = Self {
             revision: job.revision.to_string(),
-            starts: "worst".to_owned(),
             cuts: numbers.typed(defaults::CUTS_PER_WEEK),
             chemistry: draft.choice.chemistry.name().to_owned(),
             bus: draft.choice.bus.map_or_else(String::new, |bus| numbers.typed(bus.volts().0)),
@@ -181,7 +178,7 @@ impl CutForm {
             (self.length, self.other) = ("other".to_owned(), hours);
         }
         if let StartsAt::At(time) = outage.starts_at {
-            (self.starts, self.starts_time) = ("at".to_owned(), time.to_string());
+            self.starts_time = time.to_string();
         }
         self.cuts = numbers.typed(outage.cuts_per_week);
         self.mains = numbers.typed(outage.mains_between_cuts.0);
@@ -190,7 +187,6 @@ impl CutForm {
     fn fill_reuse(&mut self, reuse: Option<ReusedInverter>, numbers: Numbers) {
         let Some(unit) = reuse else { return };
         let number = |value: Option<f64>| value.map_or_else(String::new, |value| numbers.typed(value));
-        self.reuse = "yes".to_owned();
         self.reuse_va = numbers.typed(unit.rating.0);
         self.reuse_w = number(unit.rating_w.map(|power| power.0));
         self.reuse_surge = number(unit.surge.map(|power| power.0));
@@ -201,12 +197,12 @@ impl CutForm {
     }
 
     fn fields(&self) -> Vec<(&'static str, String)> {
-        let length = if self.length == "other" { &self.other } else { &self.length };
+        let length = if self.is_another_length() { &self.other } else { &self.length };
         let ratings = self.ratings.values().filter(|rating| !rating.ah.is_empty());
         let ratings = ratings.map(|rating| format!("{} h {} Ah", rating.hours, rating.ah)).collect::<Vec<_>>();
         [
             ("Length of the cut", length.clone()),
-            ("Starts", if self.starts == "at" { self.starts_time.clone() } else { "worst".to_owned() }),
+            ("Starts", self.starts_time.clone()),
             ("Cuts in a week", self.cuts.clone()),
             ("Mains between cuts", self.mains.clone()),
             ("Battery", self.chemistry.clone()),
@@ -221,7 +217,7 @@ impl CutForm {
     fn read(&self, before: &Draft, mark: DecimalMark, complaints: &mut Complaints) -> Option<Draft> {
         let outage = self.read_outage(mark, complaints);
         let battery_ratings = self.read_ratings(mark, complaints);
-        let reuse = if self.reuse == "yes" { self.read_reuse(mark, complaints) } else { None };
+        let reuse = if self.is_reused() { self.read_reuse(mark, complaints) } else { None };
         let mut choice = before.choice;
         match Chemistry::named(&self.chemistry) {
             Some(chemistry) => choice.chemistry = chemistry,
@@ -235,8 +231,19 @@ impl CutForm {
         Some(Draft { outage: Some(outage?), battery_ratings, reuse, choice, ..before.clone() })
     }
 
+    /// Whether the length stands in the box; what is typed there counts where nothing is picked.
+    fn is_another_length(&self) -> bool {
+        self.length == "other" || (self.length.is_empty() && !self.other.trim().is_empty())
+    }
+
+    /// Whether something is told of a unit that is there.
+    fn is_reused(&self) -> bool {
+        let told = [&self.reuse_va, &self.reuse_w, &self.reuse_surge, &self.reuse_changeover];
+        told.into_iter().chain([&self.reuse_low, &self.reuse_high]).any(|typed| !typed.trim().is_empty())
+    }
+
     fn read_outage(&self, mark: DecimalMark, complaints: &mut Complaints) -> Option<Outage> {
-        let (field, typed) = if self.length == "other" { ("other", &self.other) } else { ("length", &self.length) };
+        let (field, typed) = if self.is_another_length() { ("other", &self.other) } else { ("length", &self.length) };
         let autonomy = if typed.trim().is_empty() {
             Err("choose how long it lasts".to_owned().into())
         } else {
@@ -257,10 +264,10 @@ impl CutForm {
     }
 
     fn read_start(&self, complaints: &mut Complaints) -> Option<StartsAt> {
-        if self.starts != "at" {
+        let typed = self.starts_time.trim();
+        if typed.is_empty() {
             return Some(StartsAt::Worst);
         }
-        let typed = self.starts_time.trim();
         let padded = if typed.len() == 4 { format!("0{typed}") } else { typed.to_owned() };
         let time = survey::clock(&padded).filter(|time| *time < TimeOfDay::END_OF_DAY);
         let time = time.ok_or_else(|| "give a time, such as 18:00".to_owned());

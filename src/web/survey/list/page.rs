@@ -122,11 +122,11 @@ impl ListPage {
     fn told(&self, row: &Row) -> String {
         let usual = self.frame.numbers.three_figures(defaults::usual(row.kind()).surge_multiple);
         let surge = if row.surge.is_empty() { usual } else { row.surge.clone() };
-        let when = if row.when.is_empty() { "all day" } else { &row.when };
+        let when = if row.when.is_empty() { "All day" } else { &row.when };
         let duty = if row.duty.is_empty() { String::new() } else { format!(", working {} %", row.duty) };
         let start = if row.kind().is_motor() { format!(", starts at {surge}×") } else { String::new() };
         let turn = if row.turn.is_empty() { String::new() } else { format!(", takes turns: {}", row.turn) };
-        format!("{}{start} · {when}{duty}{turn}", row.kind().label())
+        format!("{when}{duty} · {}{start}{turn}", row.kind().label())
     }
 
     /// A unit with what is usual for the line's kind of start.
