@@ -23,8 +23,8 @@ pub struct Arguments {
     /// Folder of the data file
     #[arg(long, env = "KEEPLIT_DATA", default_value = "keeplit-data")]
     data: PathBuf,
-    /// Address that customers' links and QR codes show, such as https://example.org/power
-    #[arg(long, env = "KEEPLIT_PUBLIC_ADDRESS", value_parser = public_address)]
+    /// Address that customers' links and QR codes show, with its scheme and base path
+    #[arg(long, value_name = "URL", env = "KEEPLIT_PUBLIC_ADDRESS", value_parser = public_address)]
     public_address: Option<String>,
     /// Address of a proxy whose word on the caller's address is taken; may be given several times
     #[arg(long, env = "KEEPLIT_TRUSTED_PROXY", value_delimiter = ',')]

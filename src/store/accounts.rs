@@ -4,7 +4,7 @@ use sqlx::SqliteConnection;
 
 use super::Store;
 use super::error::{Error, Result};
-use super::submission::{Once, once};
+use super::submission::Once;
 use crate::accounts::{Firm, FirmId, NewPerson, Person, PersonId, Profile, folded};
 use crate::keys::Revision;
 
@@ -25,18 +25,14 @@ impl Store {
 
     /// Makes the first firm with its first person; [`Error::Taken`] once there is anybody.
     pub async fn begin(&self, submit: Once, profile: Profile, made_up: bool, person: NewPerson) -> Result<PersonId> {
-        let id = self.writer.write(move |connection| {
+        let now = submit.now;
+        let id = self.write_once(0, submit, move |connection| {
             Box::pin(async move {
-                once(connection, 0, submit.clone(), |connection| {
-                    Box::pin(async move {
-                        if sqlx::query_scalar!("select count(*) from person").fetch_one(&mut *connection).await? > 0 {
-                            return Err(Error::Taken);
-                        }
-                        let firm = insert_firm(connection, &profile, made_up, submit.now).await?;
-                        insert_person(connection, firm, &person, submit.now).await
-                    })
-                })
-                .await
+                if sqlx::query_scalar!("select count(*) from person").fetch_one(&mut *connection).await? > 0 {
+                    return Err(Error::Taken);
+                }
+                let firm = insert_firm(connection, &profile, made_up, now).await?;
+                insert_person(connection, firm, &person, now).await
             })
         });
         Ok(PersonId(id.await?))
@@ -77,24 +73,19 @@ impl Store {
 
     /// Stores what a firm has set, unless it was saved since `seen`: then [`Error::Stale`].
     pub async fn save_firm(&self, firm: FirmId, submit: Once, seen: Revision, profile: Profile) -> Result<()> {
-        let write = self.writer.write(move |connection| {
+        let write = self.write_once(firm.0, submit, move |connection| {
             Box::pin(async move {
-                once(connection, firm.0, submit, |connection| {
-                    Box::pin(async move {
-                        let profile = written(&profile);
-                        let saved = sqlx::query!(
-                            "update firm set profile = ?, revision = revision + 1 where firm_id = ? and revision = ?",
-                            profile,
-                            firm.0,
-                            seen.0
-                        );
-                        match saved.execute(connection).await?.rows_affected() {
-                            0 => Err(Error::Stale),
-                            _ => Ok(firm.0),
-                        }
-                    })
-                })
-                .await
+                let profile = written(&profile);
+                let saved = sqlx::query!(
+                    "update firm set profile = ?, revision = revision + 1 where firm_id = ? and revision = ?",
+                    profile,
+                    firm.0,
+                    seen.0
+                );
+                match saved.execute(connection).await?.rows_affected() {
+                    0 => Err(Error::Stale),
+                    _ => Ok(firm.0),
+                }
             })
         });
         write.await.map(|_| ())

@@ -4,7 +4,7 @@ use sqlx::SqliteConnection;
 
 use super::Store;
 use super::error::{Error, Result};
-use super::submission::{Once, once};
+use super::submission::Once;
 use crate::accounts::{FirmId, folded};
 use crate::documents::Draft;
 use crate::jobs::{Contact, DAYS_IN_BIN, Filter, Job, JobId, JobState, JobSummary};
@@ -18,14 +18,9 @@ impl Store {
     /// Starts a job.
     pub async fn start_job(&self, firm: FirmId, submit: Once, contact: Contact, draft: &Draft) -> Result<JobId> {
         let survey = draft.write();
-        let write = self.writer.write(move |connection| {
-            Box::pin(async move {
-                let now = submit.now;
-                once(connection, firm.0, submit, |connection| {
-                    Box::pin(async move { insert(connection, firm, &contact, &survey, now).await })
-                })
-                .await
-            })
+        let now = submit.now;
+        let write = self.write_once(firm.0, submit, move |connection| {
+            Box::pin(async move { insert(connection, firm, &contact, &survey, now).await })
         });
         Ok(JobId(write.await?))
     }
@@ -187,24 +182,18 @@ impl Store {
 
     /// A new job with the survey of another; neither prices nor quotes come along.
     pub async fn copy_job(&self, firm: FirmId, submit: Once, id: JobId) -> Result<JobId> {
-        let write = self.writer.write(move |connection| {
+        let now = submit.now;
+        let write = self.write_once(firm.0, submit, move |connection| {
             Box::pin(async move {
-                let now = submit.now;
-                once(connection, firm.0, submit, |connection| {
-                    Box::pin(async move {
-                        let source = sqlx::query!(
-                            "select customer, place, phone, survey from job where firm_id = ? and job_id = ?",
-                            firm.0,
-                            id.0
-                        );
-                        let source = source.fetch_one(&mut *connection).await?;
-                        let customer = format!("Copy of {}", source.customer).chars().take(120).collect();
-                        let contact =
-                            Contact { customer, place: source.place, phone: source.phone, note: String::new() };
-                        insert(connection, firm, &contact, &source.survey, now).await
-                    })
-                })
-                .await
+                let source = sqlx::query!(
+                    "select customer, place, phone, survey from job where firm_id = ? and job_id = ?",
+                    firm.0,
+                    id.0
+                );
+                let source = source.fetch_one(&mut *connection).await?;
+                let customer = format!("Copy of {}", source.customer).chars().take(120).collect();
+                let contact = Contact { customer, place: source.place, phone: source.phone, note: String::new() };
+                insert(connection, firm, &contact, &source.survey, now).await
             })
         });
         Ok(JobId(write.await?))
@@ -260,18 +249,13 @@ impl Store {
         id: JobId,
         change: impl for<'c> FnOnce(&'c mut SqliteConnection, i64) -> super::writer::Writing<'c, u64> + Send + 'static,
     ) -> Result<()> {
-        let write = self.writer.write(move |connection| {
+        let now = submit.now;
+        let write = self.write_once(firm.0, submit, move |connection| {
             Box::pin(async move {
-                let now = submit.now;
-                once(connection, firm.0, submit, |connection| {
-                    Box::pin(async move {
-                        match change(&mut *connection, now).await? {
-                            0 => Err(why_unchanged(connection, firm, id).await?),
-                            _ => Ok(id.0),
-                        }
-                    })
-                })
-                .await
+                match change(&mut *connection, now).await? {
+                    0 => Err(why_unchanged(connection, firm, id).await?),
+                    _ => Ok(id.0),
+                }
             })
         });
         write.await.map(|_| ())

@@ -20,6 +20,7 @@ use std::path::{Path, PathBuf};
 use std::sync::Arc;
 use std::time::Duration;
 
+use sqlx::SqliteConnection;
 use sqlx::sqlite::{SqliteConnectOptions, SqliteJournalMode, SqlitePool, SqlitePoolOptions, SqliteSynchronous};
 
 pub use accounts::SignedIn;
@@ -27,7 +28,8 @@ pub use backup::Report;
 pub use error::{Error, Result};
 use folder::Folder;
 pub use submission::Once;
-use writer::Writer;
+use submission::once;
+use writer::{Writer, Writing};
 
 /// Name of the database in the data folder.
 pub const FILE: &str = "keeplit.db";
@@ -61,6 +63,17 @@ impl Store {
     /// The data folder.
     pub fn folder(&self) -> PathBuf {
         self.folder.path().to_owned()
+    }
+
+    /// A write that a form causes, done once for its key; the id that it made.
+    async fn write_once(
+        &self,
+        owner: i64,
+        submit: Once,
+        work: impl for<'c> FnOnce(&'c mut SqliteConnection) -> Writing<'c, i64> + Send + 'static,
+    ) -> Result<i64> {
+        let write = self.writer.write(move |connection| Box::pin(once(connection, owner, submit, work)));
+        write.await
     }
 
     /// Waits for what is being written, and closes the file.

@@ -5,7 +5,7 @@ use sqlx::SqliteConnection;
 
 use super::Store;
 use super::error::{Error, Result};
-use super::submission::{Once, once};
+use super::submission::Once;
 use crate::accounts::FirmId;
 use crate::jobs::JobId;
 use crate::keys::Revision;
@@ -21,23 +21,18 @@ impl Store {
         seen: Revision,
         new: NewVersion,
     ) -> Result<VersionId> {
-        let write = self.writer.write(move |connection| {
+        let now = submit.now;
+        let write = self.write_once(firm.0, submit, move |connection| {
             Box::pin(async move {
-                let now = submit.now;
-                once(connection, firm.0, submit, |connection| {
-                    Box::pin(async move {
-                        let current = sqlx::query_scalar!(
-                            "select revision from job where firm_id = ? and job_id = ? and binned_at is null",
-                            firm.0,
-                            job.0
-                        );
-                        if current.fetch_one(&mut *connection).await? != seen.0 {
-                            return Err(Error::Stale);
-                        }
-                        freeze(connection, firm, job, &new, now).await
-                    })
-                })
-                .await
+                let current = sqlx::query_scalar!(
+                    "select revision from job where firm_id = ? and job_id = ? and binned_at is null",
+                    firm.0,
+                    job.0
+                );
+                if current.fetch_one(&mut *connection).await? != seen.0 {
+                    return Err(Error::Stale);
+                }
+                freeze(connection, firm, job, &new, now).await
             })
         });
         Ok(VersionId(write.await?))
@@ -84,37 +79,32 @@ impl Store {
         ends_at: i64,
         who: String,
     ) -> Result<LinkId> {
-        let write = self.writer.write(move |connection| {
+        let now = submit.now;
+        let write = self.write_once(firm.0, submit, move |connection| {
             Box::pin(async move {
-                let now = submit.now;
-                once(connection, firm.0, submit, |connection| {
-                    Box::pin(async move {
-                        let job = job_of(connection, firm, version).await?;
-                        let token_hash = token_hash.as_slice();
-                        let made = sqlx::query!(
-                            "insert into share_link (firm_id, version_id, token_hash, made_at, ends_at)
+                let job = job_of(connection, firm, version).await?;
+                let token_hash = token_hash.as_slice();
+                let made = sqlx::query!(
+                    "insert into share_link (firm_id, version_id, token_hash, made_at, ends_at)
                              values (?, ?, ?, ?, ?)",
-                            firm.0,
-                            version.0,
-                            token_hash,
-                            now,
-                            ends_at
-                        );
-                        let id = made.execute(&mut *connection).await?.last_insert_rowid();
-                        let sent = sqlx::query!(
-                            "update job
+                    firm.0,
+                    version.0,
+                    token_hash,
+                    now,
+                    ends_at
+                );
+                let id = made.execute(&mut *connection).await?.last_insert_rowid();
+                let sent = sqlx::query!(
+                    "update job
                                 set state = case when state in ('being_sized', 'priced') then 'sent' else state end,
                                     touched_at = ?
                               where job_id = ?",
-                            now,
-                            job
-                        );
-                        sent.execute(&mut *connection).await?;
-                        note(connection, firm, job, &who, "made a link", now).await?;
-                        Ok(id)
-                    })
-                })
-                .await
+                    now,
+                    job
+                );
+                sent.execute(&mut *connection).await?;
+                note(connection, firm, job, &who, "made a link", now).await?;
+                Ok(id)
             })
         });
         Ok(LinkId(write.await?))
@@ -136,29 +126,21 @@ impl Store {
 
     /// Cancels a link; it is dead at once.
     pub async fn cancel_link(&self, firm: FirmId, submit: Once, id: LinkId, who: String) -> Result<()> {
-        let write = self.writer.write(move |connection| {
+        let now = submit.now;
+        let write = self.write_once(firm.0, submit, move |connection| {
             Box::pin(async move {
-                let now = submit.now;
-                once(connection, firm.0, submit, |connection| {
-                    Box::pin(async move {
-                        let link = sqlx::query!(
-                            "select version_id from share_link where firm_id = ? and link_id = ?",
-                            firm.0,
-                            id.0
-                        );
-                        let version = VersionId(link.fetch_one(&mut *connection).await?.version_id);
-                        let cancelled = sqlx::query!(
-                            "update share_link set cancelled_at = ? where link_id = ? and cancelled_at is null",
-                            now,
-                            id.0
-                        );
-                        cancelled.execute(&mut *connection).await?;
-                        let job = job_of(connection, firm, version).await?;
-                        note(connection, firm, job, &who, "cancelled a link", now).await?;
-                        Ok(id.0)
-                    })
-                })
-                .await
+                let link =
+                    sqlx::query!("select version_id from share_link where firm_id = ? and link_id = ?", firm.0, id.0);
+                let version = VersionId(link.fetch_one(&mut *connection).await?.version_id);
+                let cancelled = sqlx::query!(
+                    "update share_link set cancelled_at = ? where link_id = ? and cancelled_at is null",
+                    now,
+                    id.0
+                );
+                cancelled.execute(&mut *connection).await?;
+                let job = job_of(connection, firm, version).await?;
+                note(connection, firm, job, &who, "cancelled a link", now).await?;
+                Ok(id.0)
             })
         });
         write.await.map(|_| ())

@@ -5,7 +5,7 @@ use sqlx::SqliteConnection;
 use super::Store;
 use super::error::{Error, Result};
 use super::quotes::{LinkRow, VersionRow, note};
-use super::submission::{Once, once};
+use super::submission::Once;
 use crate::accounts::FirmId;
 use crate::quotes::{Answer, FrozenVersion, Link, LinkState, Shared};
 
@@ -22,20 +22,15 @@ impl Store {
     ///
     /// [`Error::Taken`] once it was answered, [`Error::Stale`] if the link is dead by now.
     pub async fn answer(&self, token_hash: [u8; 32], submit: Once, answer: Answer) -> Result<()> {
-        let write = self.writer.write(move |connection| {
+        let now = submit.now;
+        let write = self.write_once(0, submit, move |connection| {
             Box::pin(async move {
-                let now = submit.now;
-                once(connection, 0, submit, |connection| {
-                    Box::pin(async move {
-                        let (firm, shared) = find(connection, token_hash, now).await?.ok_or(Error::NotFound)?;
-                        match (&shared.version.answer, shared.state) {
-                            (Some(_), _) => Err(Error::Taken),
-                            (None, LinkState::Open) => keep(connection, firm, &shared, &answer, now).await,
-                            (None, _) => Err(Error::Stale),
-                        }
-                    })
-                })
-                .await
+                let (firm, shared) = find(connection, token_hash, now).await?.ok_or(Error::NotFound)?;
+                match (&shared.version.answer, shared.state) {
+                    (Some(_), _) => Err(Error::Taken),
+                    (None, LinkState::Open) => keep(connection, firm, &shared, &answer, now).await,
+                    (None, _) => Err(Error::Stale),
+                }
             })
         });
         write.await.map(|_| ())
