@@ -6,7 +6,7 @@ use crate::reading;
 use crate::sizing::survey::{Load, StartKind};
 use crate::wording::{Labelled, Numbers};
 
-/// A power this many times off the usual ones is asked about.
+/// A power this many times off the usual one, and outside those of all loads of that name, is asked about.
 const SLIP: f64 = 5.0;
 
 /// What to ask about each load, by its place in the list.
@@ -16,11 +16,14 @@ pub fn of(loads: &[Load], numbers: Numbers) -> BTreeMap<u32, String> {
 }
 
 fn question(load: &Load, numbers: Numbers) -> Option<String> {
-    let Some((least, most)) = reading::usual_power(&load.name) else { return unknown(load) };
+    let Some((likely, (least, most))) = reading::likely(&load.name).zip(reading::usual_power(&load.name)) else {
+        return unknown(load);
+    };
     let watts = |power: f64| numbers.with_unit(power, "W");
     let usual = if least == most { watts(least.0) } else { format!("{} to {}", watts(least.0), watts(most.0)) };
-    let is_usual = (least.0 / SLIP..=most.0 * SLIP).contains(&load.running.0);
-    (!is_usual).then(|| format!("“{}” is usually {usual}. Keep {}?", load.name, watts(load.running.0)))
+    let is_far = !(1.0 / SLIP..=SLIP).contains(&(load.running / likely.running));
+    (is_far && !(least.0..=most.0).contains(&load.running.0))
+        .then(|| format!("“{}” is usually {usual}. Keep {}?", load.name, watts(load.running.0)))
 }
 
 /// A name that says nothing, counted as what starts the gentlest.
@@ -43,11 +46,13 @@ mod tests {
 
     #[test]
     fn a_power_far_from_the_usual_ones_is_asked_about() {
-        for (watts, is_asked) in [(150.0, false), (10.0, true), (60.0, false), (3000.0, true), (15_000.0, true)] {
+        for (watts, is_asked) in
+            [(150.0, false), (10.0, true), (60.0, false), (700.0, false), (1500.0, true), (15_000.0, true)]
+        {
             assert_eq!(!of(&[fridge(watts)], Numbers::default()).is_empty(), is_asked, "{watts}");
         }
-        let asked = &of(&[fridge(3000.0)], Numbers::default())[&0];
-        assert!(asked.starts_with("“Fridge” is usually ") && asked.ends_with("Keep 3,000\u{a0}W?"), "{asked}");
+        let asked = &of(&[fridge(1500.0)], Numbers::default())[&0];
+        assert!(asked.starts_with("“Fridge” is usually ") && asked.ends_with("Keep 1,500\u{a0}W?"), "{asked}");
     }
 
     #[test]
