@@ -39,7 +39,7 @@ pub fn rows(defaults: &Assumptions, typed: &BTreeMap<String, String>, numbers: N
     let row = |entry: crate::sizing::assumptions::Entry| Row {
         field: format!("assumptions[{}]", entry.about.key),
         name: entry.about.name,
-        default: numbers.typed(entry.value),
+        default: numbers.with_unit(entry.value, entry.about.unit),
         unit: entry.about.unit,
         typed: typed.get(entry.about.key).cloned().unwrap_or_default(),
         source: entry.about.source,
