@@ -22,8 +22,6 @@ struct BackPage {
     copies: Vec<Copy>,
     version: &'static str,
     public_address: Option<String>,
-    jobs: i64,
-    versions: i64,
     faults: Vec<String>,
 }
 
@@ -43,16 +41,13 @@ struct Copy {
 
 /// The back room.
 pub async fn show(State(app): State<App>, installer: Installer) -> Result<Response, Error> {
-    let report = app.store.check().await?;
     page(&BackPage {
         frame: Frame::of(&app, &installer, "Back room")?,
         people: app.store.people(installer.firm.id).await?,
         copies: copies(&folder(&app)).await,
         version: env!("CARGO_PKG_VERSION"),
         public_address: app.config.public_address.clone(),
-        jobs: report.jobs,
-        versions: report.versions,
-        faults: report.faults,
+        faults: app.store.check().await?.faults,
     })
 }
 
