@@ -191,13 +191,14 @@ fn invented(part: &str) -> i64 {
 mod tests {
     use super::*;
     use crate::documents::survey;
-    use crate::sizing::{Severity, size};
+    use crate::simulation;
+    use crate::sizing::Severity;
 
     #[test]
     fn no_made_up_design_is_stopped_by_a_finding() {
         for story in &STORIES {
             let (draft, survey) = survey::read(story.survey).unwrap();
-            let design = size(&survey, draft.assumptions(&[]));
+            let design = simulation::design(&survey, draft.assumptions(&[]));
             let stops: Vec<_> = design.findings.iter().filter(|finding| finding.severity() == Severity::Stop).collect();
             assert!(stops.is_empty(), "{}: {stops:?}", story.place);
         }
@@ -207,7 +208,7 @@ mod tests {
     fn the_made_up_jobs_stand_on_twelve_twenty_four_and_forty_eight_volts() {
         let volts = STORIES.each_ref().map(|story| {
             let (draft, survey) = survey::read(story.survey).unwrap();
-            size(&survey, draft.assumptions(&[])).bank.bus.volts().0
+            simulation::design(&survey, draft.assumptions(&[])).bank.bus.volts().0
         });
         assert_eq!(volts, [12.0, 48.0, 24.0]);
     }

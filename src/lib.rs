@@ -16,6 +16,7 @@ pub mod passwords;
 pub mod qr;
 pub mod quotes;
 pub mod reading;
+pub mod simulation;
 pub mod sizing;
 pub mod store;
 pub mod translations;

@@ -37,7 +37,7 @@ fn assert_silent(rooms: &[&str], words: &[&str]) {
     }
 }
 
-const ENGINE: &[&str] = &["units.rs", "sizing"];
+const ENGINE: &[&str] = &["units.rs", "sizing", "simulation"];
 const RECORDS: &[&str] = &["accounts.rs", "jobs.rs", "quotes.rs", "money.rs"];
 const TEXT: &[&str] = &["wording", "reading", "drawing"];
 const WORLD: &[&str] = &[
@@ -79,6 +79,11 @@ fn the_engine_knows_nothing_of_what_is_built_on_it() {
             "crate::cli",
         ],
     );
+}
+
+#[test]
+fn the_formulas_know_nothing_of_the_simulation() {
+    assert_silent(&["units.rs", "sizing"], &["crate::simulation::", "use crate::simulation"]);
 }
 
 #[test]

@@ -7,7 +7,7 @@ use std::process::ExitCode;
 use anyhow::Context;
 
 use crate::documents::{Fault, design, limits, survey};
-use crate::sizing;
+use crate::simulation;
 
 const EXAMPLES: &str = "\
 Examples:
@@ -15,6 +15,10 @@ Examples:
   keeplit size - < survey.json
 
 A wrong file gets one line for each fault on standard error, and exit code 2.";
+
+/// How many years of cuts are played, and the seed of their chance; the same survey gets the same answer.
+const YEARS: u32 = 1000;
+const SEED: u64 = 1;
 
 /// What `size` is told.
 #[derive(Debug, clap::Args)]
@@ -29,7 +33,8 @@ pub fn run(arguments: &Arguments) -> anyhow::Result<ExitCode> {
     let answer = text_of(&arguments.survey)?.map_err(|fault| vec![fault]).and_then(|text| survey::read(&text));
     match answer {
         Ok((draft, survey)) => {
-            let design = sizing::size(&survey, draft.assumptions(&[]));
+            let design =
+                simulation::with_years(&survey, simulation::design(&survey, draft.assumptions(&[])), YEARS, SEED);
             say(&serde_json::to_string_pretty(&design::write(&design, &draft))?)?;
             Ok(ExitCode::SUCCESS)
         }

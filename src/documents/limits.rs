@@ -79,6 +79,12 @@ pub const AUTONOMY_H: Limit = Limit::new(0.25, 168.0, "h");
 pub const CUTS_PER_WEEK: Limit = Limit::new(0.0, 168.0, "");
 /// Mains between cuts.
 pub const MAINS_BETWEEN_CUTS_H: Limit = Limit::new(0.0, 8784.0, "h");
+/// Usual or longest cut.
+pub const CUT_H: Limit = Limit::new(0.05, 168.0, "h");
+/// By how much announced blocks move on each day.
+pub const BLOCKS_SHIFT_H: Limit = Limit::new(0.0, 23.0, "h");
+/// Hours of a day in which the mains is outside the unit's window.
+pub const LOW_VOLTAGE_H: Limit = Limit::new(0.0, 24.0, "h");
 /// How many of one load.
 pub const QUANTITY: Limit = Limit::whole(1.0, 1000.0);
 /// Input of one load.

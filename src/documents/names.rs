@@ -1,6 +1,8 @@
 //! How choices are written in a file: one table for reading and writing.
 
-use crate::sizing::survey::{Chemistry, Code, Conductor, Insulation, LifeSupport, Method, NeedsSine, StartKind};
+use crate::sizing::survey::{
+    Chemistry, Code, Conductor, Insulation, LifeSupport, Method, Mostly, NeedsSine, StartKind,
+};
 
 /// A choice with a fixed list of names.
 pub trait Named: Copy + PartialEq + 'static {
@@ -51,6 +53,13 @@ named!(Chemistry {
     VrlaAgm = "vrla_agm",
     VrlaGel = "vrla_gel",
     Lfp = "lfp",
+});
+named!(Mostly {
+    AnyTime = "any",
+    Daytime = "daytime",
+    Afternoon = "afternoon",
+    Evening = "evening",
+    Night = "night",
 });
 named!(Code { Iec = "iec", Nec = "nec" });
 named!(Conductor { Copper = "copper", Aluminium = "aluminium" });

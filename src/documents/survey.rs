@@ -10,9 +10,10 @@ use super::limits as limit;
 use super::read::{Gathered, Object, number_in};
 use crate::sizing::assumptions::Assumptions;
 use crate::sizing::survey::{
-    BatteryRating, BusVolts, Chemistry, Choice, Load, MotorPlate, Outage, ReusedInverter, Runs, Site, StartsAt, Survey,
-    TimeOfDay, Window,
+    BatteryRating, BusVolts, Chemistry, Choice, Load, Mostly, MotorPlate, Outage, Pattern, ReusedInverter, Runs, Site,
+    StartsAt, Survey, TimeOfDay, Window,
 };
+use crate::sizing::tables::outages::{self, Region};
 use crate::units::{
     AcVolts, AmpHours, Amps, Celsius, DcVolts, Fraction, Hertz, Hours, Metres, Milliseconds, Seconds, VoltAmps, Watts,
 };
@@ -166,7 +167,36 @@ fn outage(o: &mut Object) -> Option<Outage> {
     let cuts_per_week = o.number_or("cuts_per_week", limit::CUTS_PER_WEEK, defaults::CUTS_PER_WEEK);
     let between = defaults::mains_between_cuts(cuts_per_week, autonomy.unwrap_or(Hours::ZERO));
     let mains_between_cuts = Hours(o.number_or("mains_between_cuts_h", limit::MAINS_BETWEEN_CUTS_H, between.0));
-    Some(Outage { autonomy: autonomy?, starts_at, cuts_per_week, mains_between_cuts })
+    let pattern = pattern(o);
+    Some(Outage { autonomy: autonomy?, starts_at, cuts_per_week, mains_between_cuts, pattern })
+}
+
+fn pattern(o: &mut Object) -> Pattern {
+    let (usual, longest) = (o.number("usual_h", limit::CUT_H), o.number("longest_h", limit::CUT_H));
+    if usual.is_some_and(|usual| longest.is_some_and(|longest| longest < usual)) {
+        o.fault("longest_h", "give no less than usual_h");
+    }
+    let entries = o.list("blocks", limit::WINDOWS);
+    let blocks = windows_of(o, "blocks", entries);
+    Pattern {
+        usual: usual.map(Hours),
+        longest: longest.map(Hours),
+        mostly: o.choice_or("mostly", Mostly::AnyTime),
+        blocks,
+        blocks_shift: Hours(o.number("blocks_shift_h", limit::BLOCKS_SHIFT_H).unwrap_or(0.0)),
+        low_voltage: Hours(o.number("low_voltage_h_per_day", limit::LOW_VOLTAGE_H).unwrap_or(0.0)),
+        region: region(o),
+    }
+}
+
+fn region(o: &mut Object) -> Option<&'static Region> {
+    let name = o.text("region", limit::NAME)?;
+    let region = outages::region(&name);
+    if region.is_none() {
+        let names: Vec<_> = outages::REGIONS.iter().map(|region| region.name).collect();
+        o.fault("region", format!("give one of {}", names.join(", ")));
+    }
+    region
 }
 
 fn starts_at(o: &mut Object) -> StartsAt {
@@ -282,10 +312,14 @@ fn windows(o: &mut Object) -> Vec<Window> {
     if entries.is_empty() {
         return o.default("windows", json!([["00:00", "24:00"]]), vec![Window::ALL_DAY]);
     }
+    windows_of(o, "windows", entries)
+}
+
+fn windows_of(o: &mut Object, key: &'static str, entries: Vec<&RawValue>) -> Vec<Window> {
     let read = |(at, value): (usize, &RawValue)| {
         let window = window(value);
         if window.is_none() {
-            o.fault_at("windows", at, value, "give two different times, as [\"18:00\", \"23:00\"]");
+            o.fault_at(key, at, value, "give two different times, as [\"18:00\", \"23:00\"]");
         }
         window
     };

@@ -9,6 +9,7 @@ use super::names::Named;
 use super::survey;
 use crate::sizing::assumptions::Assumptions;
 use crate::sizing::survey::*;
+use crate::sizing::tables::outages;
 use crate::units::*;
 
 fn within(limit: Limit) -> impl Strategy<Value = f64> {
@@ -56,12 +57,34 @@ fn site() -> impl Strategy<Value = Site> {
 fn outage() -> impl Strategy<Value = Outage> {
     let starts = prop_oneof![Just(StartsAt::Worst), (0..1440_u16).prop_map(|minute| StartsAt::At(time(minute)))];
     let often = (within(limit::CUTS_PER_WEEK), within(limit::MAINS_BETWEEN_CUTS_H));
-    (within(limit::AUTONOMY_H), starts, often).prop_map(|(autonomy, starts_at, (cuts_per_week, between))| Outage {
-        autonomy: Hours(autonomy),
-        starts_at,
-        cuts_per_week,
-        mains_between_cuts: Hours(between),
-    })
+    (within(limit::AUTONOMY_H), starts, often, pattern()).prop_map(
+        |(autonomy, starts_at, (cuts_per_week, between), pattern)| Outage {
+            autonomy: Hours(autonomy),
+            starts_at,
+            cuts_per_week,
+            mains_between_cuts: Hours(between),
+            pattern,
+        },
+    )
+}
+
+fn pattern() -> impl Strategy<Value = Pattern> {
+    let usual = proptest::option::of(0.05..24.0_f64);
+    let longest = proptest::option::of(24.0..168.0_f64);
+    let mostly = any_of::<Mostly>();
+    let blocks = (proptest::collection::vec(window(), 0..limit::WINDOWS), within(limit::BLOCKS_SHIFT_H));
+    let region = proptest::option::of(select(outages::REGIONS.iter().collect::<Vec<_>>()));
+    (usual, longest, mostly, blocks, within(limit::LOW_VOLTAGE_H), region).prop_map(
+        |(usual, longest, mostly, (blocks, shift), low, region)| Pattern {
+            usual: usual.map(Hours),
+            longest: longest.map(Hours),
+            mostly,
+            blocks,
+            blocks_shift: Hours(shift),
+            low_voltage: Hours(low),
+            region,
+        },
+    )
 }
 
 fn time(minute: u16) -> TimeOfDay {

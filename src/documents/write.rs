@@ -5,7 +5,7 @@ use serde_json::{Map, Value, json};
 use super::draft::Draft;
 use super::names::Named;
 use super::survey::FORMAT;
-use crate::sizing::survey::{Choice, Load, MotorPlate, Outage, ReusedInverter, Runs, Site, StartsAt};
+use crate::sizing::survey::{Choice, Load, MotorPlate, Outage, ReusedInverter, Runs, Site, StartsAt, Window};
 
 /// The whole draft.
 pub fn document(draft: &Draft) -> Value {
@@ -49,16 +49,30 @@ fn outage(outage: &Outage) -> Value {
         StartsAt::Worst => "worst".to_owned(),
         StartsAt::At(time) => time.to_string(),
     };
-    json!({
+    let pattern = &outage.pattern;
+    let mut value = json!({
         "autonomy_h": outage.autonomy,
         "starts_at": starts_at,
         "cuts_per_week": outage.cuts_per_week,
         "mains_between_cuts_h": outage.mains_between_cuts,
-    })
+        "usual_h": pattern.usual,
+        "longest_h": pattern.longest,
+        "mostly": pattern.mostly.name(),
+        "blocks_shift_h": pattern.blocks_shift,
+        "low_voltage_h_per_day": pattern.low_voltage,
+        "region": pattern.region.map(|region| region.name),
+    });
+    if !pattern.blocks.is_empty() {
+        value["blocks"] = json!(windows(&pattern.blocks));
+    }
+    value
+}
+
+fn windows(windows: &[Window]) -> Vec<[String; 2]> {
+    windows.iter().map(|window| [window.from.to_string(), window.to.to_string()]).collect()
 }
 
 fn load(load: &Load) -> Value {
-    let windows: Vec<_> = load.windows.iter().map(|w| [w.from.to_string(), w.to.to_string()]).collect();
     let mut value = json!({
         "name": load.name,
         "quantity": load.quantity,
@@ -69,7 +83,7 @@ fn load(load: &Load) -> Value {
         "surge_multiple": load.surge_multiple,
         "surge_s": load.surge_lasts,
         "duty": load.duty,
-        "windows": windows,
+        "windows": windows(&load.windows),
         "turn": load.turn,
         "needs_sine": load.needs_sine.name(),
         "max_break_ms": load.max_break,

@@ -6,7 +6,8 @@ use crate::money::{Currency, Money};
 use crate::quotes::Quantity;
 use crate::quotes::price::{PriceDraft, PricedLine};
 use crate::quotes::sheet::{FirmShown, QuoteSheet};
-use crate::sizing::{Design, Survey, size};
+use crate::simulation;
+use crate::sizing::{Design, Survey};
 
 const HOUSE: &str = include_str!("../demo/house.json");
 const SHOP: &str = include_str!("../demo/shop.json");
@@ -17,14 +18,14 @@ fn voice() -> Voice {
 
 fn designed(document: &str) -> (Survey, Design) {
     let (draft, survey) = survey::read(document).unwrap();
-    let design = size(&survey, draft.assumptions(&[]));
+    let design = simulation::design(&survey, draft.assumptions(&[]));
     (survey, design)
 }
 
 fn offered(document: &str, change: impl FnOnce(&mut Survey)) -> QuoteSheet {
     let (mut survey, _) = designed(document);
     change(&mut survey);
-    let design = size(&survey, crate::sizing::Assumptions::defaults(survey.choice.chemistry));
+    let design = simulation::design(&survey, crate::sizing::Assumptions::defaults(survey.choice.chemistry));
     let currency = Currency::EUR;
     let price = |line: PricedLine| PricedLine { unit_price: Some(Money { minor: 1250, currency }), ..line };
     let draft = PriceDraft {
@@ -90,7 +91,7 @@ fn a_unit_that_is_there_is_not_sold_again() {
         changeover: None,
         mains_window: None,
     });
-    let design = size(&survey, crate::sizing::Assumptions::defaults(survey.choice.chemistry));
+    let design = simulation::design(&survey, crate::sizing::Assumptions::defaults(survey.choice.chemistry));
     assert!(kit(&survey, &design, voice()).iter().all(|line| line.key != "inverter"));
 }
 

@@ -227,6 +227,15 @@ assumptions! {
     /// Power factor of the charger's input.
     charger_power_factor = |_: &Properties| 0.8, "Power factor of the charger's input", "", 0.4..=1.0,
         "phase-controlled chargers built into home units", CommonPractice;
+    /// How long the unit waits after the mains is back before it takes it.
+    requalification_s = |_: &Properties| 30.0, "Wait after the mains is back before the unit takes it", "s", 0.0..=900.0,
+        "units' manuals: 3 to 30 s; the longest is taken", Read;
+    /// Time by which an announced cut runs over its end.
+    block_overrun_h = |_: &Properties| 0.5, "Time by which an announced cut runs over its end", "h", 0.0..=4.0,
+        "up to half an hour of switching in a published scheme", FromMemory;
+    /// Current at which the absorption ends, over the 20 h capacity.
+    absorption_ends_a_per_ah = |_: &Properties| 0.02, "Charging current at which the bank counts as full, over the 20 h capacity", "A/Ah", 0.001..=0.1,
+        "makers' charging notes: 2 to 3 % of the 20 h capacity", Read;
     /// Battery cable drop aimed at.
     dc_drop_target = |_: &Properties| 0.02, "Voltage drop aimed at on battery cables", "", 0.002..=0.1,
         "no single international figure; 2 % is our target", OurRule;

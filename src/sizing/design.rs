@@ -7,6 +7,7 @@ use serde::Serialize;
 use super::assumptions::Assumptions;
 use super::finding::Finding;
 use super::load_survey::Power;
+use super::proof::Proof;
 use super::sheet::Line;
 use super::survey::{BusVolts, StartKind, TimeOfDay};
 use crate::units::{
@@ -42,10 +43,6 @@ pub struct Design {
     /// The factors in force.
     pub assumptions: Assumptions,
 }
-
-/// The cuts played through. Nothing plays them yet, so there is no value of this type.
-#[derive(Clone, Debug, PartialEq, Serialize)]
-pub enum Proof {}
 
 /// What the loads ask for.
 #[derive(Clone, Debug, PartialEq, Serialize)]
@@ -244,7 +241,7 @@ pub struct Bank {
     pub temperature_factor: f64,
     /// What each method asks for, all with the same factors.
     pub methods: Methods,
-    /// The method that ruled: `peukert` or `section`.
+    /// The method that ruled: `peukert`, `section` or `kibam`.
     pub ruled_by: RulingMethod,
     /// Current at cut-off and peak running load.
     #[serde(rename = "peak_current_a")]
@@ -275,7 +272,7 @@ pub struct Methods {
     /// Section method with ageing.
     #[serde(rename = "section_ah")]
     pub section: AmpHours,
-    /// Kinetic model; `None` until a simulation has played the cut.
+    /// Kinetic model, by playing the cut through; `None` until that was done.
     #[serde(rename = "kibam_ah")]
     pub kibam: Option<AmpHours>,
 }
@@ -287,6 +284,7 @@ pub struct Methods {
 pub enum RulingMethod {
     Peukert,
     Section,
+    Kibam,
 }
 
 /// A motor's start on this unit, bank and cable.

@@ -118,6 +118,18 @@ pub enum Finding {
     ConductorOutsideTable { run: Run, resistance: OhmsPerKilometre },
     /// A code letter without an upper end.
     CodeLetterOpen { load: String },
+    /// Three or more ratings follow no kinetic battery: the cut was played with the exponent.
+    RatingsNotKinetic { peukert: f64 },
+    /// The bank does not last the cut when it is played through.
+    CutNotHeld { lasts: Hours, asked: Hours },
+    /// Formula and play-through ask for different capacities.
+    MethodsDiffer { by_formula: AmpHours, played: AmpHours },
+    /// A motor starts at first but no more at the end of the cut.
+    StartFailsLate { load: String, at: Hours, lowest: DcVolts, cut_off: DcVolts },
+    /// The bank is not full before every cut.
+    SlowlyLosing { missing_hours: Hours, missing_current: Option<Amps> },
+    /// The bank is never full again.
+    NeverRecovers { missing_hours: Hours, missing_current: Option<Amps> },
 }
 
 impl Finding {
@@ -140,7 +152,10 @@ impl Finding {
             | FaultHeatsCable { .. }
             | AmbientOutsideTable { .. }
             | FloodedWithoutAir { .. }
-            | LithiumInTheCold { .. } => Severity::Stop,
+            | LithiumInTheCold { .. }
+            | CutNotHeld { .. }
+            | StartFailsLate { .. }
+            | NeverRecovers { .. } => Severity::Stop,
             MotorStartMarginal { .. }
             | SquareWaveRefused { reused: false, .. }
             | RestartTogetherTooMuch { .. }
@@ -167,11 +182,14 @@ impl Finding {
             | NoAluminium { .. }
             | FaultCurrentNeedsMaker { .. }
             | FuseSlowOnAgedBank { .. }
-            | CodeLetterOpen { .. } => Severity::Warn,
+            | CodeLetterOpen { .. }
+            | SlowlyLosing { .. } => Severity::Warn,
             SquareWaveDisliked { .. }
             | TypicalRatings { .. }
             | NoLoadDrawHeavy { .. }
-            | BreakerSlowOnBattery { .. } => Severity::Note,
+            | BreakerSlowOnBattery { .. }
+            | RatingsNotKinetic { .. }
+            | MethodsDiffer { .. } => Severity::Note,
         }
     }
 }

@@ -8,8 +8,8 @@ use super::survey::{Site, Survey};
 use super::tables::chemistries::properties;
 use crate::units::{Celsius, Years};
 
-/// Weeks in a mean year.
-const WEEKS: f64 = 365.25 / 7.0;
+/// Spans of four weeks in a mean year.
+const FOUR_WEEKS: f64 = 365.25 / 28.0;
 
 /// The temperature up to which the calendar life holds.
 const BASE: Celsius = Celsius(25.0);
@@ -20,16 +20,16 @@ const NOT_WORN_OUT: Years = Years(100.0);
 const CYCLES_PER_YEAR: Rule = Rule {
     symbol: "n_year",
     name: "Cycles in a year",
-    formula: "n_year = cuts per week · 365.25 / 7",
+    formula: "n_year = cuts in four weeks · 365.25 / 28",
     unit: "",
-    source: "each cut counted as long as the one designed for",
+    source: "each cut is a cycle of its own depth",
     checked: Checked::OurRule,
 };
 
 const CYCLES: Rule = Rule {
     symbol: "N",
     name: "Cycles to 80 % of the capacity at the depth of the cut",
-    formula: "N = N_1 · (DoD/D_1)^(−b) between published points; N = N_1 · D_1/DoD below the shallowest",
+    formula: "N = 1 / mean of 1/N_i, N_i = N_1 · (DoD/D_1)^(−b) between published points; N = N_1 · D_1/DoD below the shallowest",
     unit: "",
     source: "makers' data sheets; tubular and gel from memory. Sources differ three-fold",
     checked: Checked::FromMemory,
@@ -71,12 +71,27 @@ const EXPECTED: Rule = Rule {
     checked: Checked::OurRule,
 };
 
+/// What the cuts do to the bank.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Wear {
+    /// Cuts in four weeks.
+    pub cuts: f64,
+    /// Depth of discharge of each; at least one.
+    pub depths: Vec<f64>,
+}
+
+impl Wear {
+    /// Every cut as long and as deep as the one designed for.
+    pub fn of_sized_cut(survey: &Survey, bank: &Bank) -> Self {
+        Self { cuts: survey.outage.cuts_per_week * 4.0, depths: vec![bank.depth_of_discharge] }
+    }
+}
+
 /// How long the bank lives at the depth and the number of these cuts.
-pub fn life(survey: &Survey, bank: &Bank, assumptions: &Assumptions, sheet: &mut Sheet) -> Life {
-    let cuts = survey.outage.cuts_per_week;
-    let cycles_per_year =
-        sheet.line("life.cycles_per_year", &CYCLES_PER_YEAR, &[("cuts per week", cuts, "")], cuts * WEEKS);
-    let cycles = cycles(survey, bank.depth_of_discharge, sheet);
+pub fn life(survey: &Survey, wear: &Wear, assumptions: &Assumptions, sheet: &mut Sheet) -> Life {
+    let values = [("cuts in four weeks", wear.cuts, "")];
+    let cycles_per_year = sheet.line("life.cycles_per_year", &CYCLES_PER_YEAR, &values, wear.cuts * FOUR_WEEKS);
+    let cycles = cycles(survey, &wear.depths, sheet);
     let by_cycles = by_cycles(cycles, cycles_per_year, sheet);
     let (at, by_calendar) = by_calendar(&survey.site, assumptions, sheet);
     let values = [("L_cycles", by_cycles.0, "years"), ("L_calendar", by_calendar.0, "years")];
@@ -84,14 +99,19 @@ pub fn life(survey: &Survey, bank: &Bank, assumptions: &Assumptions, sheet: &mut
     Life { cycles_per_year, cycles, by_cycles, by_calendar, expected, at }
 }
 
-fn cycles(survey: &Survey, depth: f64, sheet: &mut Sheet) -> f64 {
+/// Cycles of mixed depth, by their mean wear: each takes one part in the cycles at its own depth.
+fn cycles(survey: &Survey, depths: &[f64], sheet: &mut Sheet) -> f64 {
     let points = properties(survey.choice.chemistry).cycles;
-    let deepest = points[0].0;
+    let (deepest, depth) = (points[0].0, depths.iter().copied().fold(0.0, f64::max));
     if depth > deepest {
         let what = "depth of discharge of the published cycle life";
         sheet.find(Finding::OutsideMethod { what, given: depth, lowest: 0.0, highest: deepest, unit: "" });
     }
-    sheet.line("life.cycles", &CYCLES, &[("DoD", depth, "")], cycles_at(points, depth))
+    let count = (depths.len() as f64).max(1.0);
+    let wear = depths.iter().map(|&depth| 1.0 / cycles_at(points, depth)).sum::<f64>() / count;
+    let cycles = if wear > 0.0 { 1.0 / wear } else { cycles_at(points, 0.0) };
+    let values = [("DoD_mean", depths.iter().sum::<f64>() / count, ""), ("DoD_deepest", depth, "")];
+    sheet.line("life.cycles", &CYCLES, &values, cycles)
 }
 
 /// Below this depth a cut no longer counts as a cycle of its own.
@@ -154,7 +174,8 @@ mod tests {
         change(&mut survey);
         let (bank, _) = example::bank(&survey, &[(300.0, 4.0)]);
         let mut sheet = Sheet::default();
-        let life = life(&survey, &bank, &Assumptions::defaults(survey.choice.chemistry), &mut sheet);
+        let wear = Wear::of_sized_cut(&survey, &bank);
+        let life = life(&survey, &wear, &Assumptions::defaults(survey.choice.chemistry), &mut sheet);
         (life, sheet)
     }
 

@@ -3,6 +3,7 @@
 //! The types say what a survey means. Numbers get in through one door,
 //! `crate::documents::survey`, which holds the limits; so every number here is finite and in range.
 
+use super::tables::outages::Region;
 use crate::units::{
     AcVolts, AmpHours, Amps, Celsius, Fraction, Hertz, Hours, Metres, Milliseconds, Seconds, VoltAmps, Watts,
 };
@@ -64,6 +65,43 @@ pub struct Outage {
     pub cuts_per_week: f64,
     /// Hours of mains between one cut and the next: the time to recharge.
     pub mains_between_cuts: Hours,
+    /// What else is known of the cuts.
+    pub pattern: Pattern,
+}
+
+/// What is known of the cuts beside the one to be bridged; everything may be unknown.
+#[derive(Clone, Debug, Default, PartialEq)]
+pub struct Pattern {
+    /// How long a cut usually lasts.
+    pub usual: Option<Hours>,
+    /// The longest of a year.
+    pub longest: Option<Hours>,
+    /// When most of them come.
+    pub mostly: Mostly,
+    /// Cuts that the feeder announces for each day.
+    pub blocks: Vec<Window>,
+    /// By how much the blocks move on from one day to the next.
+    pub blocks_shift: Hours,
+    /// Hours of a day in which the mains is outside the unit's window.
+    pub low_voltage: Hours,
+    /// Country whose figures stand in where nobody can say how often and how long.
+    pub region: Option<&'static Region>,
+}
+
+/// When most cuts come.
+#[derive(Clone, Copy, Debug, Default, PartialEq, Eq)]
+pub enum Mostly {
+    /// At any hour alike.
+    #[default]
+    AnyTime,
+    /// Between 6 and 18 h.
+    Daytime,
+    /// Between 12 and 20 h, as storms do.
+    Afternoon,
+    /// Between 17 and 23 h, when the network is loaded most.
+    Evening,
+    /// Between 22 and 6 h.
+    Night,
 }
 
 /// When the cut begins.
@@ -119,6 +157,16 @@ pub struct Window {
 impl Window {
     /// From midnight to midnight.
     pub const ALL_DAY: Self = Self { from: TimeOfDay::MIDNIGHT, to: TimeOfDay::END_OF_DAY };
+
+    /// Whether it holds a moment; one that ends before it begins runs over midnight, and one that ends
+    /// where it begins is the whole day.
+    pub fn holds(&self, moment: TimeOfDay) -> bool {
+        if self.from < self.to {
+            self.from <= moment && moment < self.to
+        } else {
+            self.from <= moment || moment < self.to
+        }
+    }
 }
 
 /// One line of the stay-on list.
@@ -154,6 +202,13 @@ pub struct Load {
     pub max_break: Milliseconds,
     /// Whether a life or a product hangs on it.
     pub life_support: LifeSupport,
+}
+
+impl Load {
+    /// Whether it may be on at a moment of the day.
+    pub fn is_on_at(&self, moment: TimeOfDay) -> bool {
+        self.windows.iter().any(|window| window.holds(moment))
+    }
 }
 
 /// What happens when a load is switched on.

@@ -64,7 +64,7 @@ labels!(Run {
 });
 labels!(Waveform { Sine = "sine wave", Square = "square wave" });
 labels!(MainsWindow { Narrow = "narrow", Wide = "wide" });
-labels!(RulingMethod { Peukert = "Peukert's step sum over the depth of discharge", Section = "the section method with ageing" });
+labels!(RulingMethod { Peukert = "Peukert's step sum over the depth of discharge", Section = "the section method with ageing", Kibam = "playing the cut through" });
 labels!(StartVerdict { Starts = "starts", Marginal = "marginal", WillNotStart = "will not start" });
 labels!(Checked {
     Read = "source read",

@@ -2,7 +2,7 @@
 
 use keeplit::documents::{limits, survey};
 use keeplit::sizing::design::{Cable, CrossSection, Run};
-use keeplit::sizing::{Design, Survey, size};
+use keeplit::sizing::{Design, Survey};
 use keeplit::units::{Celsius, Watts};
 use keeplit::wording;
 use proptest::prelude::*;
@@ -110,7 +110,7 @@ fn home() -> impl Strategy<Value = Survey> {
 }
 
 fn answer(survey: &Survey) -> Design {
-    size(survey, keeplit::sizing::Assumptions::defaults(survey.choice.chemistry))
+    keeplit::simulation::design(survey, keeplit::sizing::Assumptions::defaults(survey.choice.chemistry))
 }
 
 fn cable(design: &Design, run: Run) -> Option<&Cable> {

@@ -6,7 +6,8 @@ mod sheet;
 mod surveys;
 
 use keeplit::documents::{Draft, design, survey};
-use keeplit::sizing::{self, Design, Survey};
+use keeplit::simulation;
+use keeplit::sizing::{Design, Survey};
 use serde_json::Value;
 
 /// Reads a survey in the form of the command line.
@@ -17,13 +18,13 @@ fn read(text: &str) -> (Draft, Survey) {
 /// The answer to a survey with the job's own assumptions.
 fn answer(text: &str) -> Design {
     let (draft, survey) = read(text);
-    sizing::size(&survey, draft.assumptions(&[]))
+    simulation::design(&survey, draft.assumptions(&[]))
 }
 
 /// The answer as the command line writes it.
 fn written(text: &str) -> Value {
     let (draft, survey) = read(text);
-    design::write(&sizing::size(&survey, draft.assumptions(&[])), &draft)
+    design::write(&simulation::design(&survey, draft.assumptions(&[])), &draft)
 }
 
 /// Every number below a value, with the path by which the sheet names it.
@@ -52,12 +53,26 @@ fn place(path: &str, at: usize, entry: &Value) -> String {
     }
 }
 
+/// The figures of the proof that stand on the sheet; the rest of it is series, played not computed.
+const PROVED: [&str; 7] = [
+    "proof.runtime_new_h",
+    "proof.runtime_aged_h",
+    "proof.lowest_voltage_v",
+    "proof.wells.full_ah",
+    "proof.wells.at_hand_share",
+    "proof.wells.rate_per_h",
+    "proof.weeks.missing_h",
+];
+
 /// Every number of the stages, the day's stretches left out.
 fn stage_numbers(design: &Value) -> Vec<(String, f64)> {
     let mut found = Vec::new();
-    for stage in ["demand", "inverter", "bank", "starts", "charger", "cables", "ventilation", "life"] {
+    for stage in ["demand", "inverter", "bank", "starts", "charger", "cables", "ventilation", "life", "proof"] {
         numbers(stage, &design[stage], &mut found);
     }
     found.retain(|(path, _)| !path.starts_with("demand.day["));
+    let proved = found.iter().filter(|(path, _)| PROVED.contains(&path.as_str())).count();
+    assert_eq!(proved, PROVED.len(), "the proof has all its figures");
+    found.retain(|(path, _)| !path.starts_with("proof.") || PROVED.contains(&path.as_str()));
     found
 }

@@ -27,6 +27,7 @@ pub(crate) fn shop(chemistry: Chemistry) -> Survey {
             starts_at: StartsAt::Worst,
             cuts_per_week: 10.0,
             mains_between_cuts: Hours(10.0),
+            pattern: Pattern::default(),
         },
         loads: vec![],
         choice: Choice {
@@ -98,7 +99,7 @@ pub(crate) fn bank_with(survey: &Survey, cut: &[(f64, f64)], assumptions: &Assum
     let peak = cut.iter().map(|step| step.0).fold(0.0, f64::max);
     let unit = inverter(inverter(Watts(0.0)).losses.drawn(Watts(peak)));
     let steps = cut.iter().map(|&(watts, hours)| (Watts(watts), Hours(hours))).collect();
-    let bank = super::bank_for(&[steps], survey, &unit, assumptions, &mut sheet);
+    let bank = super::bank_for(&[steps], survey, &unit, None, assumptions, &mut sheet);
     (bank, sheet)
 }
 

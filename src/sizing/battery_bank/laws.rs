@@ -28,7 +28,7 @@ fn a_steady_load_on_a_simple_unit_gets_the_bank_worked_by_hand() {
     unit.losses.no_load = Watts(0.0);
     unit.losses.quadratic = 0.0;
     let mut sheet = Sheet::default();
-    let bank = bank_for(&[vec![(Watts(400.0), Hours(4.0))]], &survey, &unit, &factors, &mut sheet);
+    let bank = bank_for(&[vec![(Watts(400.0), Hours(4.0))]], &survey, &unit, None, &factors, &mut sheet);
     assert!((bank.outage.0 - 152.381).abs() < 0.001, "{bank:?}");
     assert!((bank.methods.peukert.0 - 362.118).abs() < 0.001, "{bank:?}");
     assert!((bank.methods.section.0 - 226.324).abs() < 0.001, "{bank:?}");
@@ -117,7 +117,7 @@ fn nothing_drawn_still_gets_one_string_of_the_smallest_block() {
     unit.losses.no_load = Watts(0.0);
     let survey = shop(Chemistry::VrlaAgm);
     let factors = Assumptions::defaults(Chemistry::VrlaAgm);
-    let bank = bank_for(&[vec![(Watts(0.0), Hours(4.0))]], &survey, &unit, &factors, &mut Sheet::default());
+    let bank = bank_for(&[vec![(Watts(0.0), Hours(4.0))]], &survey, &unit, None, &factors, &mut Sheet::default());
     assert_eq!((bank.required.0, bank.strings, bank.installed.0), (0.0, 1, 7.0));
     assert!(bank.depth_of_discharge == 0.0 && bank.aged_resistance.0.is_finite());
 }
@@ -137,7 +137,7 @@ fn the_worst_of_many_starts_is_as_large_as_the_largest_alone() {
     let light = vec![(Watts(100.0), Hours(4.0))];
     let early = vec![(Watts(700.0), Hours(1.0)), (Watts(100.0), Hours(3.0))];
     let late = vec![(Watts(100.0), Hours(3.0)), (Watts(700.0), Hours(1.0))];
-    let size = |cuts: &[Vec<_>]| bank_for(cuts, &survey, &unit, &factors, &mut Sheet::default());
+    let size = |cuts: &[Vec<_>]| bank_for(cuts, &survey, &unit, None, &factors, &mut Sheet::default());
     let all = size(&[light, early, late.clone()]);
     let alone = size(&[late]);
     assert!((all.methods.section.0 - alone.methods.section.0).abs() < 1e-9);
@@ -262,7 +262,7 @@ proptest! {
         let factors = Assumptions::defaults(Chemistry::VrlaAgm);
         let mut size = |starts_at| {
             survey.outage.starts_at = starts_at;
-            bank(&survey, &demand, &unit, &factors, &mut Sheet::default()).methods
+            bank(&survey, &demand, &unit, None, &factors, &mut Sheet::default()).methods
         };
         let worst = size(StartsAt::Worst);
         let at = size(StartsAt::At(TimeOfDay::from_minutes(minute).unwrap()));

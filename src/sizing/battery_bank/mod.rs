@@ -40,6 +40,8 @@ struct Given<'a> {
     assumptions: &'a Assumptions,
     curve: Curve,
     cold: f64,
+    /// Capacity that just lasts the cut when it is played through, where that was done.
+    played: Option<AmpHours>,
 }
 
 /// What one choice of bus volts leads to.
@@ -52,15 +54,17 @@ struct Answer {
     strings: Strings,
 }
 
-/// The bank that carries the cut of a survey, at its hardest start or at the one asked for.
+/// The bank that carries the cut of a survey, at its hardest start or at the one asked for; no smaller
+/// than the one that just lasted it when it was `played` through.
 pub fn bank(
     survey: &Survey,
     demand: &Demand,
     inverter: &Inverter,
+    played: Option<AmpHours>,
     assumptions: &Assumptions,
     sheet: &mut Sheet,
 ) -> Bank {
-    bank_for(&load_survey::cuts(survey, demand), survey, inverter, assumptions, sheet)
+    bank_for(&load_survey::cuts(survey, demand), survey, inverter, played, assumptions, sheet)
 }
 
 /// The bank that carries any one of these cuts.
@@ -71,14 +75,16 @@ pub fn bank_for(
     outages: &[Vec<(Watts, Hours)>],
     survey: &Survey,
     inverter: &Inverter,
+    played: Option<AmpHours>,
     assumptions: &Assumptions,
     sheet: &mut Sheet,
 ) -> Bank {
     let curve = curve(survey, assumptions, sheet);
     let cold = temperature_factor(survey, sheet);
-    let given = Given { survey, inverter, assumptions, curve, cold };
-    let answer = given.best_bus(outages);
+    let given = Given { survey, inverter, assumptions, curve, cold, played };
+    let mut answer = given.best_bus(outages);
     answer.needs.write_down(answer.methods, answer.required, cold, assumptions, sheet);
+    answer.methods.kibam = played.map(|just| needs::played(just, assumptions, sheet));
     given.offer(answer, sheet)
 }
 
@@ -116,14 +122,14 @@ impl Given<'_> {
         let cut_off = strings::cut_off(bus, chemistry, self.assumptions);
         let cuts: Vec<_> = outages.iter().map(|steps| Cut::through(&self.inverter.losses, cut_off, steps)).collect();
         let needs = needs::needs(&cuts, &self.curve);
-        let (methods, required, ruled_by) = needs.with_factors(self.cold, self.assumptions);
+        let (methods, required, ruled_by) = needs.raised(self.cold, self.played, self.assumptions);
         let strings = Strings::carrying(required, self.curve.block, chemistry);
         Answer { bus, needs, methods, required, ruled_by, strings }
     }
 
     /// The bank as it is offered, each figure written down.
     fn offer(&self, answer: Answer, sheet: &mut Sheet) -> Bank {
-        let Self { survey, inverter, assumptions, ref curve, cold } = *self;
+        let Self { survey, inverter, assumptions, ref curve, cold, .. } = *self;
         let Answer { bus, ref needs, methods, required, ruled_by, ref strings } = answer;
         let chemistry = survey.choice.chemistry;
         let kind = properties(chemistry);

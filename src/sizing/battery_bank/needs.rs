@@ -65,11 +65,26 @@ const SECTION: Rule = Rule {
 const REQUIRED: Rule = Rule {
     symbol: "C_required",
     name: "Capacity that the cut asks for",
-    formula: "C_required = max(C_peukert, C_section)",
+    formula: "C_required = max(C_peukert, C_section), or C_kinetic where playing the cut through asks for more",
     unit: "Ah",
     source: "depth of discharge and ageing are not multiplied: the larger covers both (IEEE 1013)",
     checked: Checked::FromMemory,
 };
+
+const KINETIC: Rule = Rule {
+    symbol: "C_kinetic",
+    name: "Capacity by playing the cut through",
+    formula: "C_kinetic = C_just · margin; C_just lasts the cut from every start, aged and on the coldest day",
+    unit: "Ah",
+    source: "kinetic battery model (Manwell and McGowan 1993), volts by open-circuit table and resistance",
+    checked: Checked::Read,
+};
+
+/// Capacity by playing the cut through, written down; `just` is the one that just lasts the cut.
+pub fn played(just: AmpHours, assumptions: &Assumptions, sheet: &mut Sheet) -> AmpHours {
+    let values = [("C_just", just.0, "Ah"), ("margin", assumptions.bank_margin, "")];
+    AmpHours(sheet.line("bank.methods.kibam_ah", &KINETIC, &values, (just * assumptions.bank_margin).0))
+}
 
 impl Needs {
     /// Both answers with the same factors, the larger of them, and which one it is.
@@ -82,6 +97,20 @@ impl Needs {
         let section = self.section * assumptions.ageing_factor * factors;
         let ruled_by = if section > peukert { RulingMethod::Section } else { RulingMethod::Peukert };
         (Methods { peukert, section, kibam: None }, peukert.max(section), ruled_by)
+    }
+
+    /// The same, raised to what playing the cut through asks for; `just` is the capacity that just lasts it.
+    pub fn raised(
+        &self,
+        cold: f64,
+        just: Option<AmpHours>,
+        factors: &Assumptions,
+    ) -> (Methods, AmpHours, RulingMethod) {
+        let (methods, required, ruled_by) = self.with_factors(cold, factors);
+        match just.map(|just| just * factors.bank_margin) {
+            Some(played) if played > required => (methods, played, RulingMethod::Kibam),
+            _ => (methods, required, ruled_by),
+        }
     }
 
     /// Writes the answers down.

@@ -4,7 +4,7 @@ use super::items::Item;
 use super::power::Power;
 use super::turns::Turns;
 use crate::sizing::design::{DayStretch, StartNeed};
-use crate::sizing::survey::{TimeOfDay, Window};
+use crate::sizing::survey::TimeOfDay;
 use crate::units::{VoltAmps, Watts};
 
 /// What a stretch of the day asks for.
@@ -32,6 +32,17 @@ pub fn stretches(items: &[Item]) -> Vec<Stretch> {
     boundaries(items).windows(2).map(|pair| stretch(items, pair[0], pair[1])).collect()
 }
 
+/// The same day by its averages alone; its peaks are left at nothing.
+pub fn averages(items: &[Item]) -> Vec<DayStretch> {
+    let stretch = |pair: &[TimeOfDay]| {
+        let active: Vec<_> = items.iter().filter(|item| item.load.is_on_at(pair[0])).collect();
+        let alone = active.iter().filter(|item| item.turn.is_none()).map(|item| item.average).sum::<Watts>();
+        let average = alone + Turns::of(&active).average();
+        DayStretch { from: pair[0], to: pair[1], average, peak: Watts::ZERO, peak_va: VoltAmps::ZERO }
+    };
+    boundaries(items).windows(2).map(stretch).collect()
+}
+
 fn boundaries(items: &[Item]) -> Vec<TimeOfDay> {
     let windows = items.iter().flat_map(|item| &item.load.windows);
     let mut times: Vec<_> = windows.flat_map(|window| [window.from, window.to]).collect();
@@ -42,7 +53,7 @@ fn boundaries(items: &[Item]) -> Vec<TimeOfDay> {
 }
 
 fn stretch(items: &[Item], from: TimeOfDay, to: TimeOfDay) -> Stretch {
-    let active: Vec<_> = items.iter().filter(|item| item.load.windows.iter().any(|w| holds(w, from))).collect();
+    let active: Vec<_> = items.iter().filter(|item| item.load.is_on_at(from)).collect();
     let turns = Turns::of(&active);
     let alone = || active.iter().filter(|item| item.turn.is_none());
     let always: Power = alone().map(|item| item.running).sum();
@@ -105,14 +116,4 @@ fn largest(powers: &[Power]) -> Power {
 
 fn largest_of(first: Power, others: impl Iterator<Item = Power>) -> Power {
     others.fold(first, |most, next| if next.square() > most.square() { next } else { most })
-}
-
-/// Whether a window holds a moment; one that ends before it begins runs over midnight, and one that
-/// ends where it begins is the whole day.
-fn holds(window: &Window, moment: TimeOfDay) -> bool {
-    if window.from < window.to {
-        window.from <= moment && moment < window.to
-    } else {
-        window.from <= moment || moment < window.to
-    }
 }

@@ -16,7 +16,7 @@ mod laws;
 #[cfg(test)]
 mod tests;
 
-pub use outage::cuts;
+pub use outage::{cuts, starts};
 pub use power::Power;
 
 use super::assumptions::Assumptions;
@@ -106,6 +106,11 @@ pub fn demand(survey: &Survey, assumptions: &Assumptions, sheet: &mut Sheet) -> 
         starts: hardest_starts(&stretches, survey.loads.len()),
         day,
     }
+}
+
+/// The day of a list of loads by its averages alone: what a cut takes, without what starts ask for.
+pub fn averages(survey: &Survey, assumptions: &Assumptions) -> Vec<DayStretch> {
+    day::averages(&items::items(survey, assumptions))
 }
 
 /// The stretch in which a figure is highest, the earliest of equals, and when it begins.

@@ -10,11 +10,15 @@ const DAY: f64 = 24.0;
 /// where the start was asked for, one for each start that may be the worst where it was not.
 pub fn cuts(survey: &Survey, demand: &Demand) -> Vec<Vec<(Watts, Hours)>> {
     let autonomy = survey.outage.autonomy;
-    let starts = match survey.outage.starts_at {
+    starts(survey, demand).into_iter().map(|start| steps(&demand.day, start, autonomy)).collect()
+}
+
+/// When those cuts begin, in hours since midnight.
+pub fn starts(survey: &Survey, demand: &Demand) -> Vec<Hours> {
+    match survey.outage.starts_at {
         StartsAt::At(time) => vec![time.hours()],
-        StartsAt::Worst => candidate_starts(&demand.day, autonomy),
-    };
-    starts.into_iter().map(|start| steps(&demand.day, start, autonomy)).collect()
+        StartsAt::Worst => candidate_starts(&demand.day, survey.outage.autonomy),
+    }
 }
 
 /// The starts among which the worst one is.

@@ -3,7 +3,8 @@
 //! Lead-acid: IEEE 485, temperature correction for 25 °C, electrolyte temperature in °C and factor.
 //! Source: 4.4 °C and above in a published 25 °C chart; the three coldest rows (from memory).
 //! Makers differ: one sheet's 90 % at 10 °C means 1.11 where the standard says 1.19; the standard's
-//! is kept. Warmth earns no credit: what it adds in capacity it costs in life.
+//! is kept. Warmth earns a size no credit: what it adds in capacity it costs in life. It is told only
+//! where the hours of a warm bank are told.
 
 use super::between;
 use crate::sizing::survey::Chemistry;
@@ -45,6 +46,27 @@ const LFP: &[(f64, f64)] = &[(25.0, 1.00), (0.0, 0.80), (-10.0, 0.70), (-20.0, 0
 /// Below the table the coldest row holds: see [`rows`].
 pub fn size_factor(chemistry: Chemistry, coldest: Celsius) -> f64 {
     if chemistry.is_lead_acid() { between(LEAD_ACID, coldest.0) } else { 1.0 / between(LFP, coldest.0) }
+}
+
+/// IEEE 485: °C (falling) and factor, above the base. Source: read in the same published chart.
+const LEAD_ACID_WARM: &[(f64, f64)] = &[
+    (48.9, 0.860),
+    (43.3, 0.880),
+    (37.8, 0.910),
+    (35.0, 0.930),
+    (32.2, 0.940),
+    (30.0, 0.956),
+    (27.8, 0.972),
+    (25.0, 1.000),
+];
+
+/// Capacity at a temperature over that at 25 °C; above one in a warm lead-acid bank.
+pub fn capacity_share(chemistry: Chemistry, at: Celsius) -> f64 {
+    if chemistry.is_lead_acid() && at.0 > 25.0 {
+        1.0 / between(LEAD_ACID_WARM, at.0)
+    } else {
+        1.0 / size_factor(chemistry, at)
+    }
 }
 
 /// The coldest and the warmest temperature of the table.

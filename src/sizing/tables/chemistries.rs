@@ -302,8 +302,12 @@ impl Properties {
     ///
     /// Rises in a straight line from full to the multiple at 20 %, and on along it below.
     pub fn resistance_at(&self, charge: f64, capacity: AmpHours) -> Ohms {
-        let rise = (self.resistance_multiple_nearly_empty - 1.0) * (1.0 - charge) / 0.8;
-        Ohms(self.resistance_at_1_ah.0 / capacity.0 * (1.0 + rise))
+        Ohms(self.resistance_at_1_ah.0 / capacity.0 * self.resistance_rise(charge))
+    }
+
+    /// Resistance at a state of charge over that of a full cell.
+    pub fn resistance_rise(&self, charge: f64) -> f64 {
+        1.0 + (self.resistance_multiple_nearly_empty - 1.0) * (1.0 - charge) / 0.8
     }
 }
 

@@ -11,6 +11,7 @@ pub mod chemistries;
 pub mod conductors;
 pub mod grouping;
 pub mod motors;
+pub mod outages;
 pub mod protection_ratings;
 pub mod trade_sizes;
 

@@ -167,6 +167,7 @@ fn bank(survey: &Survey, design: &Design, numbers: Numbers) -> Part {
     let method = match bank.ruled_by {
         RulingMethod::Peukert => "the depth of discharge",
         RulingMethod::Section => "the section method with ageing",
+        RulingMethod::Kibam => "playing the cut through",
     };
     let strings = if bank.strings == 1 { "one string".to_owned() } else { format!("{} strings", bank.strings) };
     Part {

@@ -9,7 +9,8 @@ use crate::quotes::NewVersion;
 use crate::quotes::changes::Standing;
 use crate::quotes::price::PriceDraft;
 use crate::quotes::sheet::FirmShown;
-use crate::sizing::{Design, Severity, Survey, size};
+use crate::simulation;
+use crate::sizing::{Design, Severity, Survey};
 use crate::translations::Words;
 use crate::web::app::App;
 use crate::web::error::Error;
@@ -49,7 +50,7 @@ impl Case {
         let voice = Voice { words: Words::of("en"), numbers: Numbers::new(mark) };
         let assumptions = job.draft.assumptions(&firm.profile.assumptions);
         let designed = job.draft.complete().ok().map(|survey| {
-            let design = size(&survey, assumptions);
+            let design = simulation::design(&survey, assumptions);
             (survey, design)
         });
         let kit = designed.as_ref().map_or_else(Vec::new, |(survey, design)| offer::kit(survey, design, voice));

@@ -11,7 +11,7 @@ use crate::documents::names::Named;
 use crate::documents::{Draft, defaults, limits, survey};
 use crate::jobs::{Job, JobId};
 use crate::reading;
-use crate::sizing::survey::{BatteryRating, BusVolts, Chemistry, Outage, ReusedInverter, StartsAt, TimeOfDay};
+use crate::sizing::survey::{BatteryRating, BusVolts, Chemistry, Outage, Pattern, ReusedInverter, StartsAt, TimeOfDay};
 use crate::store;
 use crate::units::{AcVolts, AmpHours, Hours, Milliseconds, VoltAmps, Watts};
 use crate::web::app::App;
@@ -260,7 +260,13 @@ impl CutForm {
         };
         let mains = complaints.take("mains", "Mains between cuts", mains).map(Hours);
         let starts_at = self.read_start(complaints);
-        Some(Outage { autonomy: autonomy?, starts_at: starts_at?, cuts_per_week: cuts?, mains_between_cuts: mains? })
+        Some(Outage {
+            autonomy: autonomy?,
+            starts_at: starts_at?,
+            cuts_per_week: cuts?,
+            mains_between_cuts: mains?,
+            pattern: Pattern::default(),
+        })
     }
 
     fn read_start(&self, complaints: &mut Complaints) -> Option<StartsAt> {

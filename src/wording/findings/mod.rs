@@ -4,6 +4,7 @@ mod bank;
 mod cables;
 mod charger;
 mod place;
+mod played;
 mod starts;
 mod unit;
 
@@ -102,6 +103,12 @@ pub fn finding(finding: &Finding) -> Told {
         BreakerSlowOnBattery { run, gives, trips_at } => cables::breaker_slow_on_battery(*run, *gives, *trips_at),
         ConductorOutsideTable { run, resistance } => cables::conductor_outside_table(*run, *resistance),
         CodeLetterOpen { load } => starts::code_letter_open(load),
+        RatingsNotKinetic { peukert } => played::ratings_not_kinetic(*peukert),
+        CutNotHeld { lasts, asked } => played::cut_not_held(*lasts, *asked),
+        MethodsDiffer { by_formula, played } => played::methods_differ(*by_formula, *played),
+        StartFailsLate { load, at, lowest, cut_off } => played::start_fails_late(load, *at, *lowest, *cut_off),
+        SlowlyLosing { missing_hours, missing_current } => played::slowly_losing(*missing_hours, *missing_current),
+        NeverRecovers { missing_hours, missing_current } => played::never_recovers(*missing_hours, *missing_current),
     }
 }
 

@@ -8,7 +8,7 @@ use super::form::{Count, ListForm};
 use super::row::{Against, Row};
 use crate::documents::names::Named;
 use crate::documents::{Draft, defaults};
-use crate::sizing::survey::{LifeSupport, NeedsSine, Outage, StartKind, StartsAt};
+use crate::sizing::survey::{LifeSupport, NeedsSine, Outage, Pattern, StartKind, StartsAt};
 use crate::sizing::tables::appliances::{self, Appliance, Group};
 use crate::sizing::{Assumptions, Sheet, load_survey};
 use crate::units::Hours;
@@ -163,7 +163,13 @@ pub fn tally(draft: &Draft, assumptions: &Assumptions, numbers: Numbers) -> Opti
     let autonomy = Hours(4.0);
     let cuts_per_week = defaults::CUTS_PER_WEEK;
     let mains_between_cuts = defaults::mains_between_cuts(cuts_per_week, autonomy);
-    draft.outage.get_or_insert(Outage { autonomy, starts_at: StartsAt::Worst, cuts_per_week, mains_between_cuts });
+    draft.outage.get_or_insert(Outage {
+        autonomy,
+        starts_at: StartsAt::Worst,
+        cuts_per_week,
+        mains_between_cuts,
+        pattern: Pattern::default(),
+    });
     let demand = load_survey::demand(&draft.complete().ok()?, assumptions, &mut Sheet::default());
     Some(Tally {
         running: numbers.with_unit(demand.running.0, "W"),
