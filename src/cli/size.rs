@@ -33,8 +33,9 @@ pub fn run(arguments: &Arguments) -> anyhow::Result<ExitCode> {
     let answer = text_of(&arguments.survey)?.map_err(|fault| vec![fault]).and_then(|text| survey::read(&text));
     match answer {
         Ok((draft, survey)) => {
-            let design =
-                simulation::with_years(&survey, simulation::design(&survey, draft.assumptions(&[])), YEARS, SEED);
+            let design = simulation::design(&survey, draft.assumptions(&[]));
+            let design = simulation::with_detail(&survey, design);
+            let design = simulation::with_years(&survey, design, YEARS, SEED);
             say(&serde_json::to_string_pretty(&design::write(&design, &draft))?)?;
             Ok(ExitCode::SUCCESS)
         }

@@ -7,7 +7,7 @@ use crate::sizing::design::{DayStretch, Demand};
 use crate::units::Hours;
 use crate::wording::Numbers;
 
-const LEFT: f64 = 58.0;
+const LEFT: f64 = 88.0;
 const RIGHT: f64 = 430.0;
 const TOP: f64 = 26.0;
 const BOTTOM: f64 = 216.0;

@@ -2,3 +2,6 @@
 
 pub mod chart;
 pub mod day;
+pub mod played;
+pub mod spread;
+pub mod weeks;

@@ -1,6 +1,6 @@
 //! The sheet as a whole, from a survey, its design and its prices.
 
-use super::{Voice, care, cut, lists, promise};
+use super::{Voice, care, cut, lists, promise, what_if};
 use crate::quotes::price::PriceDraft;
 use crate::quotes::sheet::{FORMAT, FirmShown, QuoteSheet};
 use crate::sizing::{Design, Survey};
@@ -37,6 +37,7 @@ pub fn sheet(
         one_at_a_time: lists::one_at_a_time(survey),
         start_in_turn: lists::start_in_turn(survey, design),
         cut: cut::cut(survey, design),
+        loads_hours: what_if::loads_hours(survey, design),
         lines,
         labour: price.labour,
         subtotal: totals.subtotal,

@@ -1,7 +1,11 @@
 //! The sized cut in a few steps, for the picture and the table under it: both show these figures.
 
 use crate::quotes::sheet::CutStretch;
+use crate::simulation::cut::Course;
+use crate::simulation::day::Day;
+use crate::simulation::plant::{NEW, Plant};
 use crate::sizing::design::DayStretch;
+use crate::sizing::proof::EndedBy;
 use crate::sizing::{Design, Survey};
 use crate::units::Watts;
 
@@ -9,29 +13,26 @@ use crate::units::Watts;
 const STEPS_H: [f64; 7] = [0.25, 0.5, 1.0, 2.0, 3.0, 6.0, 12.0];
 const MOST_STEPS: f64 = 12.0;
 
-/// The cut from its start to its end, with a new battery at 25 °C.
+/// The cut from its start to its end, with a new battery at 25 °C, as it is played.
 ///
-/// One entry per step, in order; the last one may be shorter. What is left falls with the energy
-/// drawn from the battery and ends where the design says that the sized cut ends.
+/// One entry per step, in order; the last one may be shorter.
 pub fn cut(survey: &Survey, design: &Design) -> Vec<CutStretch> {
-    let autonomy = survey.outage.autonomy.0;
     let start = design.demand.sized_start.hours().0;
-    let drawn = |output: Watts| design.inverter.losses.drawn(output).0;
-    let energy = |from: f64, to: f64| integral(&design.demand.day, start + from, start + to, drawn);
-    let whole = energy(0.0, autonomy);
-    steps(autonomy)
-        .into_iter()
-        .map(|(from_h, to_h)| {
-            let average = integral(&design.demand.day, start + from_h, start + to_h, |output| output.0);
-            let spent = if whole > 0.0 { energy(0.0, to_h) / whole } else { 0.0 };
-            CutStretch {
-                from_h,
-                to_h,
-                average_w: average / (to_h - from_h),
-                left_share: (1.0 - spent * design.bank.depth_of_discharge).clamp(0.0, 1.0),
-            }
-        })
-        .collect()
+    let day = Day::of(&design.demand.day, &design.inverter.losses);
+    let course = Course::new(Plant::of(survey, design).0.battery(design.bank.installed, NEW), &day);
+    let mut charge = course.battery.wells.filled();
+    let mut runs = true;
+    let stretch = |(from_h, to_h): (f64, f64)| {
+        let average = integral(&design.demand.day, start + from_h, start + to_h, |output| output.0);
+        runs = runs && course.play(&mut charge, start + from_h, to_h - from_h).by == EndedBy::CutEnds;
+        CutStretch {
+            from_h,
+            to_h,
+            average_w: average / (to_h - from_h),
+            left_share: (charge.total / course.battery.wells.full).clamp(0.0, 1.0),
+        }
+    };
+    steps(survey.outage.autonomy.0).into_iter().map(stretch).collect()
 }
 
 /// Even steps from nothing to the end; none if there is no time at all.

@@ -10,6 +10,7 @@ mod lists;
 mod promise;
 pub mod refill;
 pub mod since;
+pub mod what_if;
 
 use crate::translations::Words;
 use crate::wording::Numbers;

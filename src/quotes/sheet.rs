@@ -39,6 +39,9 @@ pub struct QuoteSheet {
     pub start_in_turn: Vec<String>,
     /// The sized cut, from its start to its end.
     pub cut: Vec<CutStretch>,
+    /// Hours that switching a load off gains, the most first; absent in sheets made before it was told.
+    #[serde(default, skip_serializing_if = "Vec::is_empty")]
+    pub loads_hours: Vec<LoadHours>,
     /// What is fitted and what it costs.
     pub lines: Vec<SheetLine>,
     /// Work, if it is priced apart.
@@ -121,6 +124,16 @@ pub struct CutStretch {
     pub average_w: f64,
     /// Share of the battery left at the end of the stretch.
     pub left_share: f64,
+}
+
+/// What switching one load off gains.
+#[derive(Clone, Debug, PartialEq, Serialize, Deserialize)]
+#[serde(deny_unknown_fields)]
+pub struct LoadHours {
+    /// The load.
+    pub name: String,
+    /// Hours more without it.
+    pub gains_h: f64,
 }
 
 /// One line of what is fitted.

@@ -151,7 +151,7 @@ impl Battery {
 }
 
 /// Share by which the mean current of a step may differ from that in its middle.
-pub const FINE: f64 = 5e-5;
+pub const FINE: f64 = 2e-4;
 /// What a step may take from the well at hand, over the root of the error: between two points of the tables
 /// the volts may bend where neither beginning, middle nor end of a longer step would show it.
 const REACH: f64 = 8.0;

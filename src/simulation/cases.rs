@@ -5,7 +5,7 @@ use super::cut::{Course, Played};
 use super::day::Day;
 use super::plant::{Condition, NEW, Plant};
 use crate::sizing::design::StartNeed;
-use crate::sizing::proof::{Case, HourOfStart, LateStart, Moment};
+use crate::sizing::proof::{Case, EndedBy, HourOfStart, LateStart, Moment};
 use crate::sizing::survey::TimeOfDay;
 use crate::sizing::{Design, Survey};
 use crate::units::{AmpHours, Amps, Celsius, DcVolts, Hours, Watts};
@@ -75,21 +75,23 @@ impl<'a> Bench<'a> {
         volts(played.before).min(volts(played.after))
     }
 
-    /// A case moment by moment: its beginning, and the end of every stretch until it stops or the cut ends,
-    /// whichever is later.
+    /// A case moment by moment: its beginning, and the end of every stretch until the bank stops; a bank that
+    /// lasts a week is shown over the cut asked for.
     pub fn curve(&self, condition: Condition) -> Vec<Moment> {
         let course = self.course(condition);
         let start = self.design.demand.sized_start.hours().0;
-        let limit = course.lasts(start, LONGEST).served.max(self.autonomy());
+        let stops = course.lasts(start, LONGEST).by != EndedBy::CutEnds;
+        let limit = if stops { LONGEST.max(self.autonomy()) } else { self.autonomy() };
         let mut moments: Vec<Moment> = Vec::new();
         let full = course.battery.wells.full;
-        let moment = |at: f64, stretch: usize, charge| {
+        let moment = |at: f64, stretch: usize, before, charge| {
             let of = self.day.stretches()[stretch];
-            let head = course.battery.wells.head(charge).max(0.0);
-            let volts = course.battery.sags_to(head, of.drawn);
+            let meets = |charge| course.battery.sags_to(course.battery.wells.head(charge).max(0.0), of.drawn);
+            let volts = meets(charge);
             Moment {
                 at: Hours(at),
                 load: Watts(of.load),
+                from: DcVolts(meets(before)),
                 current: Amps(of.drawn / volts),
                 volts: DcVolts(volts),
                 charge_left: (charge.total / full).clamp(0.0, 1.0),
@@ -98,10 +100,10 @@ impl<'a> Bench<'a> {
         let mut now = 0.0;
         course.play_seen(&mut course.battery.wells.filled(), start, limit, |played| {
             if moments.is_empty() {
-                moments.push(moment(0.0, played.stretch, played.before));
+                moments.push(moment(0.0, played.stretch, played.before, played.before));
             }
             if played.to > now {
-                moments.push(moment(played.to, played.stretch, played.after));
+                moments.push(moment(played.to, played.stretch, played.before, played.after));
             }
             now = played.to;
         });
@@ -152,7 +154,9 @@ impl<'a> Bench<'a> {
     /// Capacity at the reference rate that just lasts the cut in the ruling case, from every start that may
     /// be the worst.
     pub fn just_enough(&self) -> Option<AmpHours> {
-        let starts = crate::sizing::load_survey::starts(self.survey, &self.design.demand);
+        let hardest = self.design.demand.sized_start.hours();
+        let others = crate::sizing::load_survey::starts(self.survey, &self.design.demand);
+        let starts: Vec<_> = std::iter::once(hardest).chain(others).collect();
         let bank = &self.design.bank;
         let guess = bank.methods.section.min(bank.required) / self.design.assumptions.bank_margin;
         super::need::just_enough(

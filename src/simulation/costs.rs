@@ -2,7 +2,7 @@
 
 use super::cut::Course;
 use super::day::{DAY, Day};
-use super::plant::{NEW, Plant};
+use super::plant::Plant;
 use crate::sizing::load_survey;
 use crate::sizing::proof::LoadCost;
 use crate::sizing::survey::{Load, TimeOfDay, Window};
@@ -14,8 +14,8 @@ pub const LONGEST: f64 = 7.0 * DAY;
 /// When the network is loaded most and people are at home, in minutes since midnight.
 const EVENING: (u16, u16) = (17 * 60, 22 * 60);
 
-/// How long the bank of a design lasts with some of its loads, new and at 25 °C, from the start it is
-/// sized for; `None` stands for a week or more.
+/// How long the bank of a design lasts with some of its loads, at the end of its life on the coldest day,
+/// from the start it is sized for; no longer than a week.
 pub fn runtime_with(survey: &Survey, design: &Design, keeps: impl Fn(usize) -> bool) -> Hours {
     let rows = survey.loads.iter().enumerate().filter(|(row, _)| keeps(*row));
     let loads: Vec<_> = rows.map(|(_, load)| load.clone()).collect();
@@ -57,7 +57,7 @@ impl<'a> Bench<'a> {
     fn runtime(&self, loads: Vec<Load>) -> f64 {
         let survey = Survey { loads, ..self.survey.clone() };
         let day = Day::of(&load_survey::averages(&survey, &self.design.assumptions), &self.design.inverter.losses);
-        let battery = self.plant.battery(self.design.bank.installed, NEW);
+        let battery = self.plant.battery(self.design.bank.installed, Plant::ruling(self.survey));
         Course::new(battery, &day).lasts(self.design.demand.sized_start.hours().0, LONGEST).served
     }
 }

@@ -33,7 +33,7 @@ use plant::{NEW, Plant};
 use recharge::Charging;
 use year::Years;
 
-use crate::sizing::proof::{Proof, WellsShown};
+use crate::sizing::proof::{Detail, Proof, WellsShown};
 use crate::sizing::{Assumptions, Design, Survey, size, size_for};
 use crate::units::AmpHours;
 
@@ -53,6 +53,17 @@ pub fn design(survey: &Survey, assumptions: Assumptions) -> Design {
         just = just_enough(survey, &design).map(|next| next.max(enough));
     }
     prove(survey, design, just)
+}
+
+/// The design with how long it lasts from each hour of the day, and what each load costs.
+pub fn with_detail(survey: &Survey, mut design: Design) -> Design {
+    let day = Day::of(&design.demand.day, &design.inverter.losses);
+    let bench = Bench { survey, design: &design, plant: Plant::of(survey, &design).0, day: &day };
+    let detail = Detail { by_hour: bench.by_hour(), costs: costs::costs(survey, &design) };
+    if let Some(proof) = &mut design.proof {
+        proof.detail = Some(detail);
+    }
+    design
 }
 
 /// The design with some years of its cuts played.
@@ -98,9 +109,8 @@ fn prove(survey: &Survey, design: Design, just: Option<AmpHours>) -> Design {
         cases,
         starts: bench.late_starts(ruling),
         curve: bench.curve(ruling),
-        by_hour: bench.by_hour(),
         weeks,
-        costs: costs::costs(survey, &design),
+        detail: None,
         year: None,
     };
     told::with(survey, design, proof, just, refused)

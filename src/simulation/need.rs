@@ -5,18 +5,21 @@ use super::day::Day;
 use super::plant::{Condition, Plant};
 use crate::units::{AmpHours, Hours};
 
-/// By how much the answer may lie above the smallest such bank.
-const CLOSE: f64 = 1e-3;
-/// The search begins this far from the guess, and widens by the same factor.
-const REACH: f64 = 1.25;
-/// A bank so many times the guess is no answer any more: the cable alone takes too many volts.
-const FARTHEST: f64 = 1e6;
+/// Capacities are tried on a ladder whose rungs lie so far apart; so the answer to a harder question is
+/// never a lower rung.
+const RUNG: f64 = 1.001;
+/// The search begins so many rungs from the guess, and widens by as many.
+const REACH: i32 = 220;
+/// A bank so many rungs above the guess is no answer any more: the cable alone takes too many volts.
+const FARTHEST: i32 = 14_000;
+/// Below this rung no bank is worth asking for.
+const LOWEST: i32 = -14_000;
 
 /// Capacity at the reference rate that just lasts a cut from every one of these starts; `None` where no
 /// bank does, because the cable alone takes too many volts.
 ///
-/// More capacity never lasts shorter, so the first start is searched by halving and the others mostly
-/// need a single look. The answer lasts; it lies at most a thousandth above the smallest that does.
+/// More capacity never lasts shorter, so a start is searched by halving; with the hardest one first, the
+/// others mostly need a single look. The answer lasts, and lies at most a thousandth above the smallest that does.
 pub fn just_enough(
     plant: &Plant,
     day: &Day,
@@ -25,17 +28,16 @@ pub fn just_enough(
     condition: Condition,
     guess: AmpHours,
 ) -> Option<AmpHours> {
-    let lasts = |capacity: f64, start: Hours| {
-        let course = Course::new(plant.battery(AmpHours(capacity), condition), day);
+    let capacity = |rung: i32| AmpHours(RUNG.powi(rung));
+    let lasts = |rung: i32, start: Hours| {
+        let course = Course::new(plant.battery(capacity(rung), condition), day);
         course.lasts(start.0, autonomy.0).served >= autonomy.0
     };
     let first = *starts.first()?;
-    let mut enough = guess.0.max(1e-3);
-    while lasts(enough, first) {
-        enough /= REACH;
-        if enough < 1e-6 {
-            return Some(AmpHours(enough));
-        }
+    let guessed = (guess.0.max(1e-3).ln() / RUNG.ln()).ceil() as i32;
+    let mut enough = guessed;
+    while enough > LOWEST && lasts(enough, first) {
+        enough -= REACH;
     }
     for &start in starts {
         if lasts(enough, start) {
@@ -43,15 +45,15 @@ pub fn just_enough(
         }
         let mut short = enough;
         while !lasts(enough, start) {
-            (short, enough) = (enough, enough * REACH);
-            if enough > guess.0.max(1.0) * FARTHEST {
+            (short, enough) = (enough, enough + REACH);
+            if enough > guessed.max(0) + FARTHEST {
                 return None;
             }
         }
-        while enough / short > 1.0 + CLOSE {
-            let middle = (enough * short).sqrt();
+        while enough - short > 1 {
+            let middle = short + (enough - short) / 2;
             if lasts(middle, start) { enough = middle } else { short = middle }
         }
     }
-    Some(AmpHours(enough))
+    Some(capacity(enough))
 }

@@ -10,8 +10,6 @@ use crate::units::{Amps, Hours};
 
 /// A charger so many times the one that is set is searched for, no larger one.
 const STRONGEST: f64 = 8.0;
-/// Hours between two looks at the charge while it is drawn.
-const LOOK: f64 = 1.0;
 
 /// Plays the four weeks; `new_full` is the charge of the new bank at 25 °C, Ah.
 pub fn weeks(survey: &Survey, design: &Design, passage: &Passage, new_full: f64) -> Weeks {
@@ -66,7 +64,8 @@ fn missing_current(passage: &Passage, offs: &[Off]) -> Option<Amps> {
     Some(Amps(enough - set))
 }
 
-/// Lowest and highest charge of each day, seen at every turn and hour by hour.
+/// Lowest and highest charge of each day: while the mains is there it only rises, while it is away it only
+/// falls, so every turn and every midnight is looked at.
 fn days(passage: &Passage, offs: &[Off]) -> Vec<DayOfCharge> {
     let nothing = DayOfCharge { lowest: 1.0, highest: 0.0, off: Hours::ZERO };
     let mut days = vec![nothing; DAYS as usize];
@@ -86,7 +85,7 @@ fn days(passage: &Passage, offs: &[Off]) -> Vec<DayOfCharge> {
     for cut in turns.iter().map(Some).chain([None]) {
         let until = cut.map_or(end, |cut| cut.off.from);
         while now < until {
-            let next = ((now / LOOK).floor() * LOOK + LOOK).min(until);
+            let next = ((now / DAY).floor() * DAY + DAY).min(until);
             passage.charging.fill(battery, &mut charge, passage.course.day, now, next - now);
             look(next - 1e-9, charge);
             look(next.min(end - 1e-9), charge);

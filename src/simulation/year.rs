@@ -26,6 +26,11 @@ pub const GENERATOR: &str = "ChaCha, 8 rounds, one stream a year";
 /// How coarse the steps of a year may be.
 const COARSE: f64 = 1e-3;
 
+/// What the years of a survey rest on.
+pub fn rests_on(survey: &Survey) -> RestsOn {
+    if survey.outage.pattern.blocks.is_empty() { Law::of(survey).1 } else { RestsOn::Schedule }
+}
+
 /// What one year came to, in one state of the bank.
 #[derive(Clone, Copy, Debug, Default, PartialEq)]
 pub struct Tally {
@@ -58,18 +63,17 @@ impl<'a> Years<'a> {
     /// The years of a design; `day` is [`Day::of`] its demand.
     pub fn new(survey: &'a Survey, design: &'a Design, day: &'a Day, seed: u64) -> Self {
         let (plant, _) = Plant::of(survey, design);
-        let (law, rests_on) = Law::of(survey);
+        let law = Law::of(survey).0;
         let charging = Charging::of(survey, design, day);
         let passage = |condition: Condition| Passage {
             course: Course::new(plant.battery(design.bank.installed, condition), day).in_steps_of(COARSE),
             charging: charging.clone(),
         };
-        let announced = !survey.outage.pattern.blocks.is_empty();
         Self {
             survey,
             design,
             law,
-            rests_on: if announced { RestsOn::Schedule } else { rests_on },
+            rests_on: rests_on(survey),
             first: passage(NEW),
             last: passage(Plant::ruling(survey)),
             seed,

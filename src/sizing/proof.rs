@@ -28,16 +28,24 @@ pub struct Proof {
     pub cases: Vec<Case>,
     /// Each motor at the last moment of the cut at which it may start, in the ruling case.
     pub starts: Vec<LateStart>,
-    /// The ruling case moment by moment, until it stops or the cut ends, whichever is later.
+    /// The ruling case moment by moment, until it stops; one that lasts a week only over the cut asked for.
     pub curve: Vec<Moment>,
-    /// How long it lasts from each hour of the day.
-    pub by_hour: Vec<HourOfStart>,
     /// Four weeks of cuts.
     pub weeks: Weeks,
-    /// What each load costs in hours, dearest first.
-    pub costs: Vec<LoadCost>,
+    /// What is only looked at on request; absent until it was played.
+    #[serde(flatten)]
+    pub detail: Option<Detail>,
     /// A year, many times; absent until it was played.
     pub year: Option<Year>,
+}
+
+/// The bank from every hour of the day, and without each of its loads.
+#[derive(Clone, Debug, PartialEq, Serialize)]
+pub struct Detail {
+    /// How long it lasts from each hour of the day.
+    pub by_hour: Vec<HourOfStart>,
+    /// What each load costs in hours, dearest first.
+    pub costs: Vec<LoadCost>,
 }
 
 /// The kinetic battery model of the bank, new and at 25 °C.
@@ -127,6 +135,9 @@ pub struct Moment {
     /// Power of the loads up to now.
     #[serde(rename = "load_w")]
     pub load: Watts,
+    /// Volts at the unit when that power was switched on.
+    #[serde(rename = "from_v")]
+    pub from: DcVolts,
     /// Battery current now.
     #[serde(rename = "current_a")]
     pub current: Amps,
@@ -197,7 +208,7 @@ pub struct DayOfCharge {
     pub off: Hours,
 }
 
-/// What a load costs: the hours that its absence adds, new and at 25 °C.
+/// What a load costs: the hours that its absence adds in the ruling case.
 #[derive(Clone, Debug, PartialEq, Serialize)]
 pub struct LoadCost {
     /// The load.

@@ -7,6 +7,7 @@ use tokio::sync::Semaphore;
 
 use super::clock::Clock;
 use super::paths::Paths;
+use super::playing::Playing;
 use super::share::wrong_links::WrongLinks;
 use crate::keys::OneTimeKey;
 use crate::store::{Once, Store};
@@ -51,6 +52,8 @@ pub struct App {
     pub secret: [u8; 32],
     /// Wrong links, counted by address.
     pub wrong_links: Arc<WrongLinks>,
+    /// Years of cuts that are being played.
+    pub playing: Arc<Playing>,
 }
 
 impl App {
@@ -68,6 +71,7 @@ impl App {
             hashing: Arc::new(Semaphore::new(1)),
             secret,
             wrong_links: Arc::default(),
+            playing: Arc::default(),
         })
     }
 

@@ -1,8 +1,8 @@
 //! The headers of every answer, in one place.
 
 use axum::extract::Request;
-use axum::http::HeaderValue;
 use axum::http::header::{self, HeaderName};
+use axum::http::{Extensions, HeaderMap, HeaderValue, StatusCode, Version};
 use axum::middleware::Next;
 use axum::response::Response;
 
@@ -26,4 +26,13 @@ pub async fn add(request: Request, next: Next) -> Response {
         headers.entry(name).or_insert(HeaderValue::from_static(value));
     }
     response
+}
+
+/// Marks an answer that is sent piece by piece, each as soon as it is there.
+#[derive(Clone, Copy, Debug)]
+pub struct Streamed;
+
+/// Whether an answer is sent as a whole, so that it may be packed: packing holds pieces back.
+pub fn is_whole(_: StatusCode, _: Version, _: &HeaderMap, extensions: &Extensions) -> bool {
+    extensions.get::<Streamed>().is_none()
 }

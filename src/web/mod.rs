@@ -26,6 +26,7 @@ mod headers;
 mod health;
 mod past;
 mod paths;
+mod playing;
 mod price;
 mod send;
 mod session;
@@ -40,6 +41,7 @@ use axum::middleware::{from_fn, from_fn_with_state, map_response};
 use axum::routing::{get, post};
 use tower_http::catch_panic::CatchPanicLayer;
 use tower_http::compression::CompressionLayer;
+use tower_http::compression::predicate::{DefaultPredicate, Predicate};
 use tower_http::csrf::CsrfLayer;
 
 pub use app::{App, Config, random_text};
@@ -65,7 +67,7 @@ pub fn router(app: App) -> Router {
         .layer(CatchPanicLayer::custom(error::caught))
         .layer(from_fn_with_state(app.clone(), error::show))
         .layer(from_fn(headers::add))
-        .layer(CompressionLayer::new())
+        .layer(CompressionLayer::new().compress_when(DefaultPredicate::new().and(headers::is_whole)))
         .with_state(app)
 }
 
@@ -106,6 +108,9 @@ fn signed_in(app: &App) -> Router<App> {
         .route("/job/{id}/runs", get(survey::runs::show).post(survey::runs::save))
         .route("/job/{id}/needs", get(design::needs::show))
         .route("/job/{id}/hours", get(design::hours::show))
+        .route("/job/{id}/weeks", get(design::weeks::show))
+        .route("/job/{id}/weeks/stop", post(design::weeks::stop))
+        .route("/job/{id}/try", get(design::try_change::show).post(design::try_change::take))
         .route("/job/{id}/working", get(design::working::show))
         .route("/job/{id}/copy", post(book::copy))
         .route("/job/{id}/state", post(book::set_state))

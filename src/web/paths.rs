@@ -60,6 +60,12 @@ job_addresses! {
     needs = "/needs";
     /// Hour by hour.
     hours = "/hours";
+    /// Weeks and years.
+    weeks = "/weeks";
+    /// Stops playing years.
+    stop_weeks = "/weeks/stop";
+    /// Try a change.
+    try_change = "/try";
     /// The working.
     working = "/working";
     /// Assumptions of the job.

@@ -158,7 +158,7 @@ pub async fn preview(
         return Err(Error::NotFound);
     }
     let sheet = sheet_of(&version)?;
-    page(&OfferPage { preview: true, ..OfferPage::new(&version, &sheet, super::share::stylesheet(&app)) })
+    page(&OfferPage { preview: true, ..OfferPage::new(&version, &sheet, super::share::stylesheet(&app), |_| false) })
 }
 
 fn newest(version: &FrozenVersion, zone: &str) -> Result<Newest, Error> {

@@ -8,8 +8,10 @@ pub mod page;
 mod picture;
 pub mod wrong_links;
 
+use std::collections::BTreeMap;
+
 use axum::Router;
-use axum::extract::{Path, Request, State};
+use axum::extract::{Path, RawQuery, Request, State};
 use axum::http::{HeaderName, HeaderValue, StatusCode, header};
 use axum::middleware::{Next, from_fn};
 use axum::response::{Html, IntoResponse, Redirect, Response};
@@ -20,7 +22,7 @@ use super::app::{App, fresh_key};
 use super::assets::address_of;
 use super::client::Client;
 use super::error::Error;
-use super::forms::Form;
+use super::forms::{self, Form};
 use crate::keys::OneTimeKey;
 use crate::qr::Qr;
 use crate::quotes::share_key::ShareKey;
@@ -105,13 +107,32 @@ fn wrong(app: &App, client: Client) -> Response {
     (status, page.into_html()).into_response()
 }
 
+/// Rows of the stay-on list that a customer ticks off to see the hours.
+#[derive(Debug, Default, serde::Deserialize)]
+#[serde(default)]
+struct TickedOff {
+    off: BTreeMap<u32, String>,
+}
+
+impl TickedOff {
+    /// What an address asks for; an address that asks for anything else ticks nothing.
+    fn read(query: Option<&str>) -> Self {
+        query.and_then(|query| forms::read(query.as_bytes()).ok()).unwrap_or_default()
+    }
+
+    fn has(&self, row: usize) -> bool {
+        u32::try_from(row).is_ok_and(|row| self.off.contains_key(&row))
+    }
+}
+
 /// Shows the sheet, or why it is no longer open.
-async fn offer(State(app): State<App>, client: Client, Path(key): Path<String>) -> Response {
+async fn offer(State(app): State<App>, client: Client, Path(key): Path<String>, RawQuery(query): RawQuery) -> Response {
+    let off = TickedOff::read(query.as_deref());
     match open(&app, client, &key, "").await {
         Ok(opened) if opened.shared.state == LinkState::Open => {
             let Ok(key) = fresh_key() else { return Error::Busy.into_response() };
             let form = AnswerForm { key: key.to_string(), ..AnswerForm::default() };
-            opened.page(&app, form, Vec::new()).into_response()
+            opened.page(&app, form, Vec::new(), &off).into_response()
         }
         Ok(opened) => opened.gone(&app, false),
         Err(answer) => answer,
@@ -133,7 +154,8 @@ async fn send(
     let read = match answer::read(&form, Words::of(&opened.sheet.language)) {
         Ok(read) => read,
         Err(complaints) => {
-            return (StatusCode::UNPROCESSABLE_ENTITY, opened.page(&app, form, complaints)).into_response();
+            return (StatusCode::UNPROCESSABLE_ENTITY, opened.page(&app, form, complaints, &TickedOff::default()))
+                .into_response();
         }
     };
     let now = app.clock.now();
@@ -169,10 +191,16 @@ async fn kept(State(app): State<App>, client: Client, Path(key): Path<String>) -
 }
 
 impl Opened {
-    fn page(&self, app: &App, form: AnswerForm, complaints: Vec<(&'static str, String)>) -> Html<String> {
+    fn page(
+        &self,
+        app: &App,
+        form: AnswerForm,
+        complaints: Vec<(&'static str, String)>,
+        off: &TickedOff,
+    ) -> Html<String> {
         let key = self.key.to_string();
         let address = public(app, &app.paths().offer(&key));
-        let page = OfferPage::new(&self.shared.version, &self.sheet, stylesheet(app));
+        let page = OfferPage::new(&self.shared.version, &self.sheet, stylesheet(app), |row| off.has(row));
         let qr = address.as_deref().and_then(Qr::of);
         OfferPage {
             here: app.paths().offer(&key),

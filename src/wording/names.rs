@@ -2,8 +2,11 @@
 
 use crate::sizing::Severity;
 use crate::sizing::design::{MainsWindow, RulingMethod, Run, StartVerdict, Waveform};
+use crate::sizing::proof::EndedBy;
 use crate::sizing::sheet::Checked;
-use crate::sizing::survey::{Chemistry, Code, Conductor, Insulation, LifeSupport, Method, NeedsSine, StartKind};
+use crate::sizing::survey::{
+    Chemistry, Code, Conductor, Insulation, LifeSupport, Method, Mostly, NeedsSine, StartKind,
+};
 
 /// A choice that has a name for people.
 pub trait Labelled: Copy {
@@ -38,6 +41,19 @@ labels!(StartKind {
     UniversalMotor = "motor with brushes",
     Transformer = "transformer or choke",
     HeaterPtc = "PTC heater",
+});
+labels!(EndedBy {
+    CutEnds = "the end of the week",
+    EmptyWell = "no charge at hand",
+    CutOff = "low-voltage cut-off",
+    Overload = "a load it cannot carry",
+});
+labels!(Mostly {
+    AnyTime = "any time alike",
+    Daytime = "by day, 6 to 18 h",
+    Afternoon = "afternoon, 12 to 20 h",
+    Evening = "evening, 17 to 23 h",
+    Night = "night, 22 to 6 h",
 });
 labels!(NeedsSine { Yes = "needs a sine", Prefers = "prefers a sine", No = "bears a square wave" });
 labels!(LifeSupport {

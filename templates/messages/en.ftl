@@ -89,6 +89,15 @@ cut-left = Left in the battery
 cut-percent = { $percent }{"\u00A0"}%
 cut-start = start
 cut-hours = { $hours }{"\u00A0"}h
+cost-heading = What makes it last longer
+cost-without = Without { $name }: about { $duration } longer
+what-if-heading = What if you switch something off?
+what-if-told = Tick what you would leave off in a long cut. Nothing is kept; the offer stays as it is.
+what-if-button = Show the hours
+what-if-then = With these off, the battery lasts about { $duration }.
+what-if-now = With everything on, it lasts about { $duration }. Both hold on a cold day with an old battery.
+what-if-nothing = Leave at least one thing on.
+what-if-week = a week or more
 
 ## What we fit
 

@@ -29,6 +29,32 @@ async fn looking_at_a_sheet_changes_nothing_and_leaves_no_trace() {
 }
 
 #[tokio::test]
+async fn a_customer_switches_loads_off_and_sees_the_hours_and_nothing_is_kept() {
+    let service = Service::start().await;
+    let ana = service.ana().await;
+    let link = ana.offer(HOUSE).await;
+    let cleo = service.browser();
+    let plain = cleo.page(&link).await;
+    assert!(plain.contains("What if you switch something off?") && !plain.contains("With these off"));
+    assert!(plain.contains("What makes it last longer") && plain.contains(" longer</bdi>"), "{plain}");
+    let asked = cleo.page(&format!("{link}?off%5B0%5D=yes")).await;
+    assert!(asked.contains("With these off, the battery lasts about"), "{asked}");
+    assert!(asked.contains("name=\"off[0]\" value=\"yes\" checked"), "{asked}");
+    for nonsense in ["?off=1", "?off[9999]=yes", "?off[-1]=yes", "?off[a]=b", "?%ff", "?off[0][0][0][0]=x"] {
+        let page = cleo.page(&format!("{link}{nonsense}")).await;
+        assert!(!page.contains("With these off"), "{nonsense}");
+    }
+    let after = cleo.page(&link).await;
+    assert_eq!(after.replace(key_on(&after), ""), plain.replace(key_on(&plain), ""));
+    assert!(ana.page("/job/2/send").await.contains("none yet"));
+}
+
+/// The one-time key of the form on a page, which is another each time.
+fn key_on(page: &str) -> &str {
+    page.split("name=\"key\" value=\"").nth(1).and_then(|rest| rest.split('"').next()).unwrap_or("none")
+}
+
+#[tokio::test]
 async fn an_answer_needs_a_choice_and_a_name_and_keeps_what_was_typed() {
     let service = Service::start().await;
     let link = service.ana().await.offer(HOUSE).await;

@@ -45,7 +45,7 @@ fn ten_thousand_random_cuts_end_when_the_reference_ends_them() {
             survived += 1;
             let left = (reference.state.at_hand + reference.state.bound) / one.battery.wells.full;
             let share = charge.total / one.battery.wells.full;
-            assert!((share - left).abs() < 3e-5, "{number}: {share} left against {left}");
+            assert!((share - left).abs() < 1e-4, "{number}: {share} left against {left}");
         }
     }
     assert!(stopped > 2000 && survived > 2000, "{stopped} stopped, {survived} survived");

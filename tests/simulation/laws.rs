@@ -29,7 +29,7 @@ fn proved(change: impl FnOnce(&mut Value)) -> (Survey, Design) {
     let mut text = base();
     change(&mut text);
     let (draft, survey) = survey::read(&text.to_string()).unwrap_or_else(|faults| panic!("{faults:?}"));
-    let design = simulation::design(&survey, draft.assumptions(&[]));
+    let design = simulation::with_detail(&survey, simulation::design(&survey, draft.assumptions(&[])));
     (survey, design)
 }
 
@@ -77,7 +77,7 @@ fn age_and_cold_only_shorten_it() {
     }
     let (new, aged) = proof.cases.split_at(3);
     assert!(new.iter().zip(aged).all(|(new, aged)| aged.runtime < new.runtime && aged.lowest <= new.lowest));
-    assert!(proof.by_hour.iter().all(|hour| hour.aged < hour.new));
+    assert!(proof.detail.as_ref().expect("it was played").by_hour.iter().all(|hour| hour.aged < hour.new));
 }
 
 #[test]
@@ -95,7 +95,8 @@ fn short_hard_cuts_raise_the_bank_above_what_the_formulas_ask_for() {
 #[test]
 fn each_load_left_off_makes_it_last_longer_and_the_dearest_stands_first() {
     let (survey, design) = proved(|_| {});
-    let costs = &design.proof.as_ref().expect("it was played").costs;
+    let proof = design.proof.as_ref().expect("it was played");
+    let costs = &proof.detail.as_ref().expect("it was played").costs;
     assert_eq!(costs.len(), survey.loads.len());
     assert!(costs.iter().all(|cost| cost.off.0 > 0.0));
     assert!(costs.windows(2).all(|pair| pair[0].off >= pair[1].off));
@@ -104,7 +105,7 @@ fn each_load_left_off_makes_it_last_longer_and_the_dearest_stands_first() {
     let without = simulation::costs::runtime_with(&survey, &design, |row| row != iron.row);
     let whole = simulation::costs::runtime_with(&survey, &design, |_| true);
     assert!((without.0 - whole.0 - iron.off.0).abs() < 1e-9);
-    assert!((whole.0 - design.proof.as_ref().expect("it was played").runtime_new.0).abs() < 1e-9);
+    assert!((whole.0 - proof.runtime_aged.0).abs() < 1e-9);
     assert!(simulation::costs::runtime_with(&survey, &design, |_| false).0 > whole.0);
 }
 

@@ -3,6 +3,7 @@
 mod agreement;
 mod calibration;
 mod laws;
+mod physics;
 mod recharge;
 mod samples;
 mod stepper;

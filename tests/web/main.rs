@@ -10,6 +10,7 @@ mod job_book;
 mod list;
 mod my_firm;
 mod page_form;
+mod proof;
 mod runs;
 mod sign_in;
 mod site;

@@ -21,12 +21,14 @@ impl PageForm {
         let mut options: Option<(String, Option<String>)> = None;
         for tag in main.split('<') {
             if tag.starts_with("input") {
-                let is_off = tag.contains("type=\"radio\"") && !tag.contains(" checked");
+                let is_ticked = tag.contains("type=\"radio\"") || tag.contains("type=\"checkbox\"");
+                let is_off = is_ticked && !tag.contains(" checked");
                 fields.extend(attribute(tag, "name").filter(|_| !is_off).map(|name| (name, value(tag))));
             } else if tag.starts_with("select") {
                 options = Some((attribute(tag, "name").unwrap(), None));
             } else if tag.starts_with("option") {
-                let (_, chosen) = options.as_mut().unwrap();
+                // Those of a list of suggestions belong to no field.
+                let Some((_, chosen)) = options.as_mut() else { continue };
                 if chosen.is_none() || tag.contains(" selected") {
                     *chosen = Some(value(tag));
                 }

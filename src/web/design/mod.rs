@@ -1,7 +1,9 @@
-//! What the engine answers: what it needs, hour by hour, the working.
+//! What the engine answers: what it needs, hour by hour, weeks and years, a change tried, the working.
 
 pub mod hours;
 pub mod needs;
+pub mod try_change;
+pub mod weeks;
 pub mod working;
 
 use askama::Template;

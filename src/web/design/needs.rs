@@ -4,11 +4,15 @@ use askama::Template;
 use axum::extract::{Path, State};
 use axum::response::Response;
 
+use super::hours::lasts;
 use super::{anchor, unfinished};
 use crate::jobs::JobId;
+use crate::simulation;
 use crate::sizing::design::{Cable, CrossSection, Design, MotorStart, RulingMethod, StartVerdict};
+use crate::sizing::proof::{LoadCost, Recovery};
 use crate::sizing::survey::{Conductor, LifeSupport, Survey};
 use crate::sizing::{Finding, Severity};
+use crate::units::Hours;
 use crate::web::app::App;
 use crate::web::error::Error;
 use crate::web::forms::page;
@@ -25,6 +29,8 @@ struct NeedsPage {
     id: JobId,
     verdict: Verdict,
     figures: Vec<Figure>,
+    played: Vec<(&'static str, String, String)>,
+    costs: Vec<(String, Option<String>)>,
     changed: Option<String>,
     findings: Vec<Told>,
     kit: Vec<Part>,
@@ -80,11 +86,14 @@ pub async fn show(State(app): State<App>, installer: Installer, Path(id): Path<i
     let case = Case::find(&app, &installer, JobId(id)).await?;
     let frame = Frame::of_step(&app, &installer, case.job.id, StepOf::Needs, "What it needs")?;
     let Some((survey, design)) = &case.designed else { return unfinished(frame, &case.job) };
+    let design = &simulation::with_detail(survey, design.clone());
     let numbers = frame.numbers;
     page(&NeedsPage {
         id: case.job.id,
         verdict: verdict(survey, design),
-        figures: figures(survey, design, numbers),
+        figures: figures(design, numbers),
+        played: played(design, numbers),
+        costs: costs(design),
         changed: changed_since_last_sheet(&app, &case).await?,
         findings: told(&design.findings),
         kit: kit(survey, design, numbers),
@@ -113,10 +122,10 @@ fn verdict(survey: &Survey, design: &Design) -> Verdict {
     }
 }
 
-fn figures(survey: &Survey, design: &Design, numbers: Numbers) -> Vec<Figure> {
+fn figures(design: &Design, numbers: Numbers) -> Vec<Figure> {
     let bank = &design.bank;
     let blocks = bank.blocks_in_series * bank.strings;
-    let used = numbers.percent(bank.depth_of_discharge);
+    let runtimes = design.proof.as_ref().map(|proof| (proof.runtime_aged, proof.runtime_new));
     vec![
         Figure {
             name: "Inverter",
@@ -129,11 +138,63 @@ fn figures(survey: &Survey, design: &Design, numbers: Numbers) -> Vec<Figure> {
             anchor: anchor("bank.installed_ah"),
         },
         Figure {
-            name: "Used in the cut",
-            value: format!("{used} in {}", duration(survey.outage.autonomy)),
-            anchor: anchor("bank.depth_of_discharge"),
+            name: "Lasts",
+            value: runtimes.map_or_else(String::new, |(aged, new)| between(aged, new)),
+            anchor: anchor("proof.runtime_aged_h"),
         },
     ]
+}
+
+/// Two runtimes as a range, in quarters of an hour: "5 h 30 min to 7 h".
+fn between(shorter: Hours, longer: Hours) -> String {
+    let quarters = |hours: Hours| Hours((hours.0 * 4.0).floor() / 4.0);
+    let (shorter, longer) = (if shorter.0 < 2.0 { shorter } else { quarters(shorter) }, quarters(longer));
+    if shorter >= longer { lasts(shorter) } else { format!("{} to {}", lasts(shorter), lasts(longer)) }
+}
+
+/// What playing the cuts through says, each with the way to its working or its page.
+fn played(design: &Design, numbers: Numbers) -> Vec<(&'static str, String, String)> {
+    let Some(proof) = &design.proof else { return Vec::new() };
+    let starts = match proof.starts.iter().filter(|start| !start.starts).count() {
+        _ if proof.starts.is_empty() => None,
+        0 => Some("all of them".to_owned()),
+        n => Some(format!("{n} of {} do not", proof.starts.len())),
+    };
+    let full = match proof.weeks.recovery {
+        Recovery::FullBeforeNextCut => "yes".to_owned(),
+        Recovery::SlowlyLosing => format!("not every time; {} of mains missing", duration(proof.weeks.missing_hours)),
+        Recovery::NeverRecovers => format!("never; {} of mains missing", duration(proof.weeks.missing_hours)),
+    };
+    let mut rows = vec![
+        ("Lasts new, at 25 °C", lasts(proof.runtime_new), anchor("proof.runtime_new_h")),
+        ("Lasts at the end of its life, on the coldest day", lasts(proof.runtime_aged), anchor("proof.runtime_aged_h")),
+        (
+            "Lowest volts at the unit in the cut",
+            numbers.with_unit(proof.lowest.0, "V"),
+            anchor("proof.lowest_voltage_v"),
+        ),
+    ];
+    rows.extend(starts.map(|starts| ("Motors that still start at the end", starts, anchor("proof.lowest_voltage_v"))));
+    rows.push(("Full before every cut of four weeks", full, anchor("proof.weeks.missing_h")));
+    rows
+}
+
+/// What each load costs, dearest first, and what keeping it off in the evening gains; what costs next to
+/// nothing is left out.
+fn costs(design: &Design) -> Vec<(String, Option<String>)> {
+    let detail = design.proof.as_ref().and_then(|proof| proof.detail.as_ref());
+    let told = |cost: &LoadCost| {
+        let evening = cost.out_of_evening.and_then(rounded);
+        let evening = evening.map(|gain| format!("Kept off from 17 to 22 h only: about {gain} longer"));
+        Some((format!("Without {}: about {} longer", cost.load, rounded(cost.off)?), evening))
+    };
+    detail.map_or_else(Vec::new, |detail| detail.costs.iter().filter_map(told).collect())
+}
+
+/// A gain to ten minutes, to whole hours where it is long; nothing where it is less than five minutes.
+fn rounded(gain: Hours) -> Option<String> {
+    let step = if gain.0 >= 10.0 { 1.0 } else { 1.0 / 6.0 };
+    (gain.0 >= 1.0 / 12.0).then(|| lasts(Hours((gain.0 / step).round().max(1.0) * step)))
 }
 
 /// Findings of one kind stand together under their one cure.

@@ -9,10 +9,13 @@ use jiff::{Timestamp, ZonedDateTime};
 
 use super::picture::picture;
 use crate::money::Money;
+use crate::offer::Voice;
+use crate::offer::what_if::{WhatIf, about, what_if};
 use crate::qr::Qr;
-use crate::quotes::sheet::{FirmShown, QuoteSheet};
+use crate::quotes::sheet::{FirmShown, LoadHours, QuoteSheet};
 use crate::quotes::{Answer, FrozenVersion, Said};
 use crate::translations::Words;
+use crate::wording::Numbers;
 
 /// The offer sheet, for the customer and for the installer who looks at it as the customer does.
 #[derive(Template)]
@@ -40,6 +43,8 @@ pub struct OfferPage<'a> {
     pub qr: Option<Qr>,
     /// The picture of the cut, as SVG.
     pub picture: String,
+    /// What may be ticked off, and what that says.
+    pub what_if: Option<WhatIf>,
     /// The installer looks, not the customer.
     pub preview: bool,
     /// The answer that was given, in one sentence.
@@ -72,8 +77,13 @@ pub struct CutRow {
 }
 
 impl<'a> OfferPage<'a> {
-    /// A frozen version as it is shown, without a link of its own.
-    pub fn new(version: &FrozenVersion, sheet: &'a QuoteSheet, stylesheet: String) -> Self {
+    /// A frozen version as it is shown, without a link of its own; `off` are the rows ticked off.
+    pub fn new(
+        version: &FrozenVersion,
+        sheet: &'a QuoteSheet,
+        stylesheet: String,
+        off: impl Fn(usize) -> bool,
+    ) -> Self {
         let words = Words::of(&sheet.language);
         let ends_on = sheet.ends_on.parse().map_or_else(|_| sheet.ends_on.clone(), |day| words.date(day));
         Self {
@@ -88,6 +98,7 @@ impl<'a> OfferPage<'a> {
             address: String::new(),
             qr: None,
             picture: picture(&sheet.cut, words).unwrap_or_default(),
+            what_if: what_if(&version.survey, &version.design, off, voice(words)),
             preview: false,
             answered: version.answer.as_ref().map(|answer| told(answer, sheet, words)),
             form: AnswerForm::default(),
@@ -119,6 +130,11 @@ impl<'a> OfferPage<'a> {
         percent(self.sheet.tax_basis_points, self.sheet.firm.decimal_mark)
     }
 
+    fn gain(&self, load: &LoadHours) -> String {
+        let duration = about(load.gains_h, self.words);
+        self.words.fill("cost-without", &[("name", load.name.as_str().into()), ("duration", duration.into())])
+    }
+
     fn cut_rows(&self) -> Vec<CutRow> {
         let row = |stretch: &crate::quotes::sheet::CutStretch| CutRow {
             after: self.words.duration(stretch.to_h),
@@ -127,6 +143,10 @@ impl<'a> OfferPage<'a> {
         };
         self.sheet.cut.iter().map(row).collect()
     }
+}
+
+fn voice(words: &'static Words) -> Voice {
+    Voice { words, numbers: Numbers::default() }
 }
 
 /// A day as the firm's calendar has it.

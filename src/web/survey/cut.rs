@@ -11,7 +11,10 @@ use crate::documents::names::Named;
 use crate::documents::{Draft, defaults, limits, survey};
 use crate::jobs::{Job, JobId};
 use crate::reading;
-use crate::sizing::survey::{BatteryRating, BusVolts, Chemistry, Outage, Pattern, ReusedInverter, StartsAt, TimeOfDay};
+use crate::sizing::survey::{
+    BatteryRating, BusVolts, Chemistry, Mostly, Outage, Pattern, ReusedInverter, StartsAt, TimeOfDay, Window,
+};
+use crate::sizing::tables::outages;
 use crate::store;
 use crate::units::{AcVolts, AmpHours, Hours, Milliseconds, VoltAmps, Watts};
 use crate::web::app::App;
@@ -38,6 +41,13 @@ pub struct CutForm {
     starts_time: String,
     cuts: String,
     mains: String,
+    usual: String,
+    longest: String,
+    mostly: String,
+    blocks: String,
+    shift: String,
+    low: String,
+    region: String,
     chemistry: String,
     bus: String,
     square: String,
@@ -82,6 +92,23 @@ impl CutPage {
 
     fn has_ratings(&self) -> bool {
         self.form.ratings.values().any(|rating| !rating.ah.is_empty())
+    }
+
+    fn has_pattern(&self) -> bool {
+        let form = &self.form;
+        let told = [&form.usual, &form.longest, &form.blocks, &form.shift, &form.low, &form.region];
+        let touched = ["usual", "longest", "blocks", "shift", "low", "region"];
+        told.into_iter().any(|typed| !typed.is_empty())
+            || form.mostly != Mostly::AnyTime.name()
+            || touched.into_iter().any(|field| self.complaints.touch(field))
+    }
+
+    fn times(&self) -> Vec<(&'static str, &'static str)> {
+        Mostly::NAMES.iter().map(|(value, name)| (*name, value.label())).collect()
+    }
+
+    fn regions(&self) -> Vec<&'static str> {
+        outages::REGIONS.iter().map(|region| region.name).collect()
     }
 
     fn chemistries(&self) -> Vec<(&'static str, &'static str, &'static str)> {
@@ -158,6 +185,7 @@ impl CutForm {
         let mut form = Self {
             revision: job.revision.to_string(),
             cuts: numbers.typed(defaults::CUTS_PER_WEEK),
+            mostly: Mostly::AnyTime.name().to_owned(),
             chemistry: draft.choice.chemistry.name().to_owned(),
             bus: draft.choice.bus.map_or_else(String::new, |bus| numbers.typed(bus.volts().0)),
             square: if draft.choice.square_wave_offered { "yes" } else { "no" }.to_owned(),
@@ -182,6 +210,15 @@ impl CutForm {
         }
         self.cuts = numbers.typed(outage.cuts_per_week);
         self.mains = numbers.typed(outage.mains_between_cuts.0);
+        let pattern = &outage.pattern;
+        let hours = |hours: Hours| if hours > Hours::ZERO { numbers.typed(hours.0) } else { String::new() };
+        self.usual = pattern.usual.map_or_else(String::new, hours);
+        self.longest = pattern.longest.map_or_else(String::new, hours);
+        self.mostly = pattern.mostly.name().to_owned();
+        let block = |block: &Window| format!("{}-{}", block.from, block.to);
+        self.blocks = pattern.blocks.iter().map(block).collect::<Vec<_>>().join(", ");
+        (self.shift, self.low) = (hours(pattern.blocks_shift), hours(pattern.low_voltage));
+        self.region = pattern.region.map_or_else(String::new, |region| region.name.to_owned());
     }
 
     fn fill_reuse(&mut self, reuse: Option<ReusedInverter>, numbers: Numbers) {
@@ -205,6 +242,13 @@ impl CutForm {
             ("Starts", self.starts_time.clone()),
             ("Cuts in a week", self.cuts.clone()),
             ("Mains between cuts", self.mains.clone()),
+            ("Usual cut", self.usual.clone()),
+            ("Longest cut of a year", self.longest.clone()),
+            ("Most cuts", self.mostly.clone()),
+            ("Announced blocks", self.blocks.clone()),
+            ("Blocks move on", self.shift.clone()),
+            ("Low-voltage hours", self.low.clone()),
+            ("Country", self.region.clone()),
             ("Battery", self.chemistry.clone()),
             ("Volts of the bank", self.bus.clone()),
             ("Ratings", ratings.join(", ")),
@@ -260,13 +304,65 @@ impl CutForm {
         };
         let mains = complaints.take("mains", "Mains between cuts", mains).map(Hours);
         let starts_at = self.read_start(complaints);
+        let pattern = self.read_pattern(mark, complaints);
         Some(Outage {
             autonomy: autonomy?,
             starts_at: starts_at?,
             cuts_per_week: cuts?,
             mains_between_cuts: mains?,
-            pattern: Pattern::default(),
+            pattern,
         })
+    }
+
+    fn read_pattern(&self, mark: DecimalMark, complaints: &mut Complaints) -> Pattern {
+        let mut hours = |field: &str, label: &str, typed: &str, limit| {
+            if typed.trim().is_empty() {
+                return None;
+            }
+            complaints.take(field, label, reading::hours(typed, mark, limit)).map(Hours)
+        };
+        let usual = hours("usual", "A usual cut", &self.usual, limits::CUT_H);
+        let longest = hours("longest", "The longest of a year", &self.longest, limits::CUT_H);
+        let shift = hours("shift", "Each day the blocks move on by", &self.shift, limits::BLOCKS_SHIFT_H);
+        let low = hours("low", "Mains outside the unit's window", &self.low, limits::LOW_VOLTAGE_H);
+        if usual.is_some_and(|usual| longest.is_some_and(|longest| longest < usual)) {
+            complaints.add("longest", "The longest of a year", "give no less than a usual cut lasts");
+        }
+        let name = self.region.trim();
+        let region = outages::region(name);
+        if region.is_none() && !name.is_empty() {
+            complaints.add("region", "Country", "choose one of the list, or leave it empty");
+        }
+        Pattern {
+            usual,
+            longest,
+            mostly: Mostly::named(&self.mostly).unwrap_or_default(),
+            blocks: self.read_blocks(complaints),
+            blocks_shift: shift.unwrap_or(Hours::ZERO),
+            low_voltage: low.unwrap_or(Hours::ZERO),
+            region,
+        }
+    }
+
+    /// Blocks as they are announced: `06:00-08:00, 18:00-20:00`.
+    fn read_blocks(&self, complaints: &mut Complaints) -> Vec<Window> {
+        let block = |text: &str| {
+            let (from, to) = text.split_once(['-', '–'])?;
+            let time = |text: &str| {
+                let text = text.trim();
+                survey::clock(&if text.len() == 4 { format!("0{text}") } else { text.to_owned() })
+            };
+            let (from, to) = (time(from)?, time(to)?);
+            (from != to && from < TimeOfDay::END_OF_DAY).then_some(Window { from, to })
+        };
+        let typed = self.blocks.split([',', ';']).filter(|part| !part.trim().is_empty());
+        let blocks: Vec<_> = typed.map(block).collect();
+        if blocks.contains(&None) || blocks.len() > limits::WINDOWS {
+            let most = limits::WINDOWS;
+            let told = format!("give times such as 06:00-08:00, 18:00-20:00; at most {most} blocks");
+            complaints.add("blocks", "Announced blocks", told);
+        }
+        blocks.into_iter().flatten().collect()
     }
 
     fn read_start(&self, complaints: &mut Complaints) -> Option<StartsAt> {
