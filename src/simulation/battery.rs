@@ -64,13 +64,14 @@ impl Battery {
     /// Nothing where even an empty well keeps the volts; above one where a full bank does not.
     pub fn head_at_cut_off(&self, watts: f64) -> f64 {
         let current = watts / self.cut_off.0;
-        let left = |head: f64| self.open_circuit(head) - current * self.resistance_at(head) - self.cut_off.0;
-        let mut above = (1.0, left(1.0));
+        let left = |head: f64, open: f64| open * self.cells - current * self.resistance_at(head) - self.cut_off.0;
+        let (full, lower) = self.kind.open_circuit.split_first().expect("a table has rows");
+        let mut above = (full.0, left(full.0, full.1));
         if above.1 < 0.0 {
             return 2.0;
         }
-        for &(head, _) in &self.kind.open_circuit[1..] {
-            let here = left(head);
+        for &(head, open) in lower {
+            let here = left(head, open);
             if here < 0.0 {
                 return head + (above.0 - head) * here / (here - above.1);
             }

@@ -1,6 +1,7 @@
 //! How fast cuts are played, against the reference that steps them minute by minute, in one run.
 //!
-//! `cargo bench --bench proof` prints medians and ratios; no test depends on them.
+//! `cargo bench --bench proof` prints medians and ratios; no test depends on them. Run as a test, it only
+//! makes sure that all of it still runs.
 
 #[path = "../simulation/samples.rs"]
 mod samples;
@@ -8,6 +9,7 @@ mod samples;
 mod stepper;
 
 use std::hint::black_box;
+use std::sync::LazyLock;
 use std::sync::atomic::{AtomicBool, AtomicU32};
 use std::time::{Duration, Instant};
 
@@ -26,8 +28,17 @@ use keeplit::units::AmpHours;
 
 const MINUTE: f64 = 1.0 / 60.0;
 
+/// Whether times are wanted, or only that everything runs.
+static IS_BENCH: LazyLock<bool> = LazyLock::new(|| std::env::args().any(|argument| argument == "--bench"));
+
+/// So many where times are wanted, few otherwise.
+fn effort(many: u32) -> u32 {
+    if *IS_BENCH { many } else { many.min(2) }
+}
+
 /// The middle of several runs.
 fn median(runs: usize, mut run: impl FnMut()) -> Duration {
+    let runs = effort(runs as u32) as usize;
     let mut times: Vec<_> = (0..runs)
         .map(|_| {
             let begun = Instant::now();
@@ -87,7 +98,7 @@ fn one_long_cut(survey: &Survey, design: &Design, day: &Day) {
 /// Unlike banks, each at its own cut.
 fn candidates() {
     let mut chance = samples::Chance::new(1);
-    let samples: Vec<_> = (0..10_000).map(|_| samples::sample(&mut chance)).collect();
+    let samples: Vec<_> = (0..effort(10_000)).map(|_| samples::sample(&mut chance)).collect();
     let ours = median(11, || {
         for one in &samples {
             black_box(Course::new(one.battery, &one.day).lasts(one.start, one.hours));
@@ -99,7 +110,7 @@ fn candidates() {
             black_box(stepper::play(&one.battery, full, &one.powers, one.start, one.hours, MINUTE));
         }
     });
-    told("10,000 candidates, each", ours, reference, 10_000);
+    told("10,000 candidates, each", ours, reference, samples.len() as u32);
 }
 
 /// A year by the minute: the cuts by the reference, the mains between them by the law of the charger.
@@ -126,16 +137,16 @@ fn stepped_year(battery: &Battery, day: &Day, charging: &Charging, offs: &[Off])
 }
 
 fn years(survey: &Survey, design: &Design, day: &Day, name: &str) {
-    const YEARS: u32 = 1000;
+    let all = effort(1000);
     let years = Years::new(survey, design, day, 1);
     let (go, done) = (AtomicBool::new(false), AtomicU32::new(0));
     let alone = median(5, || {
-        black_box(years.play(0..YEARS, &go, &done));
+        black_box(years.play(0..all, &go, &done));
     });
     let together = median(5, || {
         std::thread::scope(|scope| {
-            let late = scope.spawn(|| years.play(YEARS / 2..YEARS, &go, &done));
-            black_box(years.play(0..YEARS / 2, &go, &done));
+            let late = scope.spawn(|| years.play(all / 2..all, &go, &done));
+            black_box(years.play(0..all / 2, &go, &done));
             black_box(late.join().expect("it does not panic"));
         });
     });
@@ -146,13 +157,13 @@ fn years(survey: &Survey, design: &Design, day: &Day, name: &str) {
         course: Course::new(plant.battery(design.bank.installed, NEW), day),
         charging: Charging::of(survey, design, day),
     };
-    let offs: Vec<_> = (0..8).map(|year| years_of(&law, year)).collect();
+    let offs: Vec<_> = (0..u64::from(effort(8))).map(|year| years_of(&law, year)).collect();
     let stepped = median(3, || {
         for offs in &offs {
             black_box(stepped_year(&passage.course.battery, day, &passage.charging, offs));
         }
     });
-    told(&format!("{name}: a year of one bank"), alone / (2 * YEARS), stepped / 8, 1);
+    told(&format!("{name}: a year of one bank"), alone / (2 * all), stepped / offs.len() as u32, 1);
     let gain = alone.as_secs_f64() / together.as_secs_f64();
     println!(
         "{:<46} {:>12.1} ms   on two threads {:>5.1} ms   1/{gain:.2}",

@@ -106,6 +106,16 @@ async fn a_browser_that_goes_away_and_stop_both_free_the_place() {
     assert!(first.text().await.unwrap().contains("Stopped; nothing was kept."));
     drop(second);
     freed("one at a time for each person").await;
+
+    // Fifty at once: no more run than there are places, and all of them end.
+    let fifty: Vec<_> = (0..50).map(|_| ana.get(&address)).collect();
+    let mut last = None;
+    for answer in fifty {
+        last = Some(answer.await);
+        assert!(service.app.playing.free_places() + 1 >= free, "one at a time for each person");
+    }
+    drop(last);
+    freed("fifty of them").await;
 }
 
 #[tokio::test]
