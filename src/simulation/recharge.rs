@@ -17,7 +17,7 @@ use super::day::Day;
 use super::wells::{Charge, root};
 use crate::sizing::tables::chemistries::properties;
 use crate::sizing::{Design, Survey};
-use crate::units::Amps;
+use crate::units::{Amps, Hours};
 
 /// How the mains fills the bank.
 #[derive(Clone, Debug, PartialEq)]
@@ -46,12 +46,14 @@ pub struct Filled {
 }
 
 impl Charging {
-    /// As the unit is set, on the coldest day; the breaker leaves what the loads do not take.
+    /// As the unit is set, on the coldest day; the breaker leaves what the loads do not take. Nothing is
+    /// charged where there is no mains between cuts, or where it is too cold for the battery.
     pub fn of(survey: &Survey, design: &Design, day: &Day) -> Self {
         let kind = properties(survey.choice.chemistry);
         let (assumptions, charger, site) = (&design.assumptions, &design.charger, &survey.site);
         let frozen = site.battery_coldest < kind.charge_temperature.0;
-        let setting = if frozen { 0.0 } else { charger.current.min(charger.most).0 };
+        let no_mains = survey.outage.mains_between_cuts <= Hours::ZERO;
+        let setting = if frozen || no_mains { 0.0 } else { charger.current.min(charger.most).0 };
         let tail = 1.0 - kind.charge_at_end_of_bulk;
         let volts = charger.absorption_coldest.0;
         let gives = site.supply.0 * assumptions.charger_power_factor * assumptions.charger_efficiency / volts;

@@ -33,8 +33,11 @@ pub fn weeks(survey: &Survey, design: &Design, passage: &Passage, new_full: f64)
 }
 
 fn recovery(passed: &[Passed]) -> Recovery {
-    let last_week = passed.iter().filter(|cut| cut.off.from >= f64::from(DAYS - 7) * DAY);
-    if passed.iter().all(|cut| cut.was_full) {
+    const WEEK: f64 = 7.0 * DAY;
+    let last_week = passed.iter().filter(|cut| cut.off.from >= f64::from(DAYS) * DAY - WEEK);
+    if passed.iter().any(|cut| cut.off.to - cut.off.from >= WEEK) {
+        Recovery::NeverRecovers
+    } else if passed.iter().all(|cut| cut.was_full) {
         Recovery::FullBeforeNextCut
     } else if last_week.clone().any(|cut| cut.was_full) || last_week.count() == 0 {
         Recovery::SlowlyLosing

@@ -170,7 +170,7 @@ pub enum Recovery {
     FullBeforeNextCut,
     /// Not full before every cut, but full again at some time of the last week.
     SlowlyLosing,
-    /// Not full once in the last week.
+    /// Not full once in the last week, or without mains for a week on end.
     NeverRecovers,
 }
 

@@ -265,6 +265,9 @@ fn hostile_surveys_get_an_answer_in_order() {
             assert_finite(&design);
             let proof = design.proof.as_ref().expect("it was played");
             assert!(proof.year.is_some(), "{name}");
+            if name.contains("mains") {
+                assert_eq!(proof.weeks.recovery, Recovery::NeverRecovers, "{name}");
+            }
             let told = design.findings.iter().any(|finding| matches!(finding, Finding::CutNotHeld { .. }));
             assert!(proof.holds != told, "{name}: {:?}", design.findings);
             assert!(proof.runtime_aged.0 >= survey.outage.autonomy.0 || told, "{name}");
