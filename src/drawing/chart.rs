@@ -1,5 +1,8 @@
 //! Scales and marks of a chart.
 
+/// Where the plot of every chart begins and ends from left to right; its labels stand before it.
+pub const ACROSS: (f64, f64) = (88.0, 426.0);
+
 /// A stretch of numbers laid over a stretch of the picture.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub struct Scale {

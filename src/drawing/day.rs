@@ -2,13 +2,11 @@
 
 use askama::Template;
 
-use super::chart::{Scale, marks};
+use super::chart::{ACROSS, Scale, marks};
 use crate::sizing::design::{DayStretch, Demand};
 use crate::units::Hours;
 use crate::wording::Numbers;
 
-const LEFT: f64 = 88.0;
-const RIGHT: f64 = 430.0;
 const TOP: f64 = 26.0;
 const BOTTOM: f64 = 216.0;
 
@@ -28,7 +26,7 @@ struct Picture {
 pub fn picture(demand: &Demand, autonomy: Hours, numbers: Numbers) -> Result<String, askama::Error> {
     let highest = demand.day.iter().map(|stretch| stretch.peak.0).fold(1.0, f64::max);
     let heights = marks(highest);
-    let x = Scale { numbers: (0.0, 24.0), places: (LEFT, RIGHT) };
+    let x = Scale { numbers: (0.0, 24.0), places: ACROSS };
     let y = Scale { numbers: (0.0, heights[heights.len() - 1]), places: (BOTTOM, TOP) };
     let line = |part: fn(&DayStretch) -> f64| stairs(&demand.day, x, y, part);
     let start = demand.sized_start.hours();

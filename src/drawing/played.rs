@@ -2,14 +2,12 @@
 
 use askama::Template;
 
-use super::chart::{Scale, marks};
+use super::chart::{ACROSS, Scale, marks};
 use crate::sizing::design::Bank;
 use crate::sizing::proof::Moment;
 use crate::units::{DcVolts, Hours};
 use crate::wording::{Numbers, duration};
 
-const LEFT: f64 = 88.0;
-const RIGHT: f64 = 426.0;
 /// Upper and lower edge of charge, volts and load.
 const BANDS: [(f64, f64); 3] = [(26.0, 126.0), (156.0, 236.0), (266.0, 336.0)];
 /// Marks on the axis of hours, in hours; the first that gives no more than ten.
@@ -58,7 +56,7 @@ pub fn picture(
     numbers: Numbers,
 ) -> Result<String, askama::Error> {
     let Some(last) = curve.last().filter(|last| last.at > Hours::ZERO) else { return Ok(String::new()) };
-    let x = Scale { numbers: (0.0, last.at.0), places: (LEFT, RIGHT) };
+    let x = Scale { numbers: (0.0, last.at.0), places: ACROSS };
     let charge = scale(0, (0.0, 1.0));
     let (low, high) = volts_between(curve, bank.cut_off);
     let volts = scale(1, (low, high));
@@ -67,7 +65,7 @@ pub fn picture(
     let place = |at: Hours, y: Scale, value: f64| format!("{} {}", x.place(at.0), y.place(value));
     Picture {
         told: told(curve, bank, asked, runtime, numbers),
-        asked: Asked { breadth: format!("{:.1}", (asked.0.min(last.at.0)) / last.at.0 * (RIGHT - LEFT)) },
+        asked: Asked { breadth: format!("{:.1}", (asked.0.min(last.at.0)) / last.at.0 * (ACROSS.1 - ACROSS.0)) },
         bands: vec![
             band("charge left", 0, [0.0, 0.5, 1.0].map(|share| (charge.place(share), numbers.percent(share))).to_vec()),
             band("volts at the unit", 1, [low, high].map(|v| (volts.place(v), numbers.with_unit(v, "V"))).to_vec()),

@@ -2,13 +2,11 @@
 
 use askama::Template;
 
-use super::chart::{Scale, marks};
+use super::chart::{ACROSS, Scale, marks};
 use crate::sizing::proof::HourOfStart;
 use crate::units::Hours;
 use crate::wording::duration;
 
-const LEFT: f64 = 88.0;
-const RIGHT: f64 = 426.0;
 const TOP: f64 = 20.0;
 const BOTTOM: f64 = 190.0;
 
@@ -27,7 +25,7 @@ struct Picture {
 pub fn picture(hours: &[HourOfStart], asked: Hours) -> Result<String, askama::Error> {
     let highest = hours.iter().map(|hour| hour.new.0).fold(asked.0, f64::max);
     let heights = marks(highest);
-    let x = Scale { numbers: (0.0, 24.0), places: (LEFT, RIGHT) };
+    let x = Scale { numbers: (0.0, 24.0), places: ACROSS };
     let y = Scale { numbers: (0.0, heights[heights.len() - 1]), places: (BOTTOM, TOP) };
     let line = |lasts: fn(&HourOfStart) -> Hours| {
         let stair = |hour: &HourOfStart| {

@@ -2,12 +2,10 @@
 
 use askama::Template;
 
-use super::chart::Scale;
+use super::chart::{ACROSS, Scale};
 use crate::sizing::proof::Weeks;
 use crate::wording::Numbers;
 
-const LEFT: f64 = 88.0;
-const RIGHT: f64 = 426.0;
 const TOP: f64 = 20.0;
 const BOTTOM: f64 = 190.0;
 
@@ -28,7 +26,7 @@ struct Bar {
 
 /// The SVG.
 pub fn picture(weeks: &Weeks, verdict: &str, numbers: Numbers) -> Result<String, askama::Error> {
-    let x = Scale { numbers: (0.0, weeks.days.len() as f64), places: (LEFT, RIGHT) };
+    let x = Scale { numbers: (0.0, weeks.days.len() as f64), places: ACROSS };
     let y = Scale { numbers: (0.0, 1.0), places: (BOTTOM, TOP) };
     let bar = |(day, charge): (usize, &crate::sizing::proof::DayOfCharge)| Bar {
         x: x.place(day as f64 + 0.5),

@@ -72,6 +72,23 @@ async fn survey(browser: &Browser) {
     browser.sees("for 4").await;
     browser.sees("What to fit, in order").await;
     browser.sees("Pressure booster pump").await;
+    proof(browser).await;
+}
+
+/// The cuts played through, a thousand years of them, and a change that is looked at and thrown away.
+async fn proof(browser: &Browser) {
+    browser.press("Hour by hour").await;
+    browser.sees("stops at").await;
+    browser.press("Weeks and years").await;
+    browser.press("Play 1,000 years").await;
+    browser.sees("Runs dry in a year").await;
+    browser.press("Back to what it needs").await;
+    browser.press("Try a change").await;
+    browser.fill("hours", "8").await;
+    browser.press("Work it out").await;
+    browser.sees("Use this one").await;
+    browser.press("Throw it away").await;
+    browser.sees("for 4").await;
 }
 
 /// Prices every line, makes the sheet and a link to it; gives the link.
@@ -97,6 +114,9 @@ async fn answer(link: &str) {
     customer.sees("Thornby Light").await;
     let text = customer.text().await;
     assert!(!text.contains("You pay"), "what the firm pays is shown to the customer");
+    customer.choose("off[0]", "yes").await;
+    customer.press("Show the hours").await;
+    customer.sees("With these off, the battery lasts about").await;
     customer.choose("said", "yes").await;
     customer.fill("name", "Grace Okafor").await;
     customer.press("Send my answer").await;
