@@ -7,7 +7,7 @@ use std::process::ExitCode;
 use anyhow::Context;
 
 use crate::documents::{Fault, design, limits, survey};
-use crate::simulation;
+use crate::simulation::{self, year};
 
 const EXAMPLES: &str = "\
 Examples:
@@ -16,8 +16,7 @@ Examples:
 
 A wrong file gets one line for each fault on standard error, and exit code 2.";
 
-/// How many years of cuts are played, and the seed of their chance; the same survey gets the same answer.
-const YEARS: u32 = 1000;
+/// Seed of the years' chance: the same survey gets the same answer.
 const SEED: u64 = 1;
 
 /// What `size` is told.
@@ -35,7 +34,7 @@ pub fn run(arguments: &Arguments) -> anyhow::Result<ExitCode> {
         Ok((draft, survey)) => {
             let design = simulation::design(&survey, draft.assumptions(&[]));
             let design = simulation::with_detail(&survey, design);
-            let design = simulation::with_years(&survey, design, YEARS, SEED);
+            let design = simulation::with_years(&survey, design, year::enough(&survey), SEED);
             say(&serde_json::to_string_pretty(&design::write(&design, &draft))?)?;
             Ok(ExitCode::SUCCESS)
         }

@@ -99,9 +99,14 @@ impl Law {
         (Self::new(kinds, pattern.mostly), rests_on)
     }
 
+    /// Cuts in a year, on average.
+    pub fn per_year(&self) -> f64 {
+        self.kinds.iter().map(|kind| kind.per_year).sum()
+    }
+
     /// The cuts of a year.
     pub fn draw(&self, random: &mut ChaCha8Rng) -> Vec<Off> {
-        let per_year: f64 = self.kinds.iter().map(|kind| kind.per_year).sum();
+        let per_year = self.per_year();
         let mut offs = Vec::with_capacity((per_year * 1.2) as usize + 4);
         if per_year <= 0.0 {
             return offs;

@@ -26,6 +26,19 @@ pub const GENERATOR: &str = "ChaCha, 8 rounds, one stream a year";
 /// How coarse the steps of a year may be.
 const COARSE: f64 = 1e-3;
 
+/// Cuts that an answer without a page plays at most, in all its years.
+const CUTS: f64 = 1e6;
+
+/// How many years are enough for an answer without a page: a thousand, fewer where cuts are very many.
+pub fn enough(survey: &Survey) -> u32 {
+    let per_year = if survey.outage.pattern.blocks.is_empty() {
+        Law::of(survey).0.per_year()
+    } else {
+        survey.outage.pattern.blocks.len() as f64 * YEAR / DAY
+    };
+    (CUTS / per_year.max(1.0)).clamp(100.0, 1000.0) as u32
+}
+
 /// What the years of a survey rest on.
 pub fn rests_on(survey: &Survey) -> RestsOn {
     if survey.outage.pattern.blocks.is_empty() { Law::of(survey).1 } else { RestsOn::Schedule }
